@@ -1,0 +1,10 @@
+/** Limits that both sides check. Sizes in bytes, lengths in characters. */
+export const MAX_UPLOAD_BYTES = 64 * 1024 * 1024;
+export const MAX_CHUNK_BYTES = 8 * 1024 * 1024;
+export const FRAMES_PER_CHUNK = 24;
+export const MAX_PARTS = 200;
+export const MAX_FRAMES = 4800;
+export const MAX_SUBSTEPS = 64;
+export const MAX_NAME = 120;
+export const MAX_REMARK = 500;
+export const PAGE_SIZE = 50;
