@@ -20,7 +20,10 @@ export const meSchema = z.object({
 });
 export type Me = z.infer<typeof meSchema>;
 
-/** Answer of POST /api/session and POST /api/session/refresh; the refresh token travels in a cookie only. */
+/**
+ * Answer of POST /api/session and POST /api/session/refresh; the refresh token travels in a cookie only.
+ * Refresh, and DELETE /api/session (sign out → 204), need the header `X-Lollop: 1`.
+ */
 export const sessionSchema = z.object({
   accessToken: z.string(),
   expiresAt: instantSchema,

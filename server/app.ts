@@ -1,0 +1,50 @@
+import compression from 'compression';
+import cookieParser from 'cookie-parser';
+import express, { type Express } from 'express';
+import { AuditController } from './audit/audit.controller';
+import { auditRoutes } from './audit/audit.routes';
+import type { Config } from './config';
+import { healthRoutes } from './health/health.routes';
+import type { Logger } from './logger';
+import { authenticate } from './middleware/authenticate';
+import { jsonBodies } from './middleware/body-limits';
+import { noStore } from './middleware/no-store';
+import { everyRequest, signInLimits } from './middleware/rate-limits';
+import { requestId } from './middleware/request-id';
+import { requestLog } from './middleware/request-log';
+import { securityHeaders } from './middleware/security-headers';
+import { webBuild } from './middleware/web-build';
+import { problemMapper, unknownPath } from './problems/problem-mapper';
+import { ProductionsController } from './productions/productions.controller';
+import { productionsRoutes } from './productions/productions.routes';
+import type { Services } from './services';
+import { SessionsController } from './sessions/sessions.controller';
+import { sessionsRoutes } from './sessions/sessions.routes';
+
+/** Everything that happens to a request, in this order. */
+export function buildApp(config: Config, services: Services, logger: Logger): Express {
+  const app = express();
+  app.disable('x-powered-by');
+  app.set('etag', false);
+  app.set('trust proxy', config.LOLLOP_TRUST_PROXY);
+
+  app.use(requestId);
+  app.use(requestLog(logger));
+  app.use(securityHeaders());
+  app.use(compression());
+  app.use('/api', noStore, everyRequest(config));
+  app.use(jsonBodies());
+  app.use(cookieParser());
+
+  const signedIn = authenticate(services.sessions);
+  app.use(healthRoutes(services.health));
+  app.use(sessionsRoutes(new SessionsController(services.sessions, services.memberships), signInLimits(config)));
+  app.use(productionsRoutes(new ProductionsController(services.productions), signedIn));
+  app.use(auditRoutes(new AuditController(services.audit), signedIn));
+
+  app.use('/api', unknownPath);
+  app.use(webBuild(config.LOLLOP_WEB_ROOT));
+  app.use(unknownPath);
+  app.use(problemMapper(logger));
+  return app;
+}
