@@ -7,21 +7,28 @@ import type { Config } from './config';
 import { healthRoutes } from './health/health.routes';
 import type { Logger } from './logger';
 import { authenticate } from './middleware/authenticate';
-import { jsonBodies } from './middleware/body-limits';
 import { noStore } from './middleware/no-store';
 import { everyRequest, signInLimits } from './middleware/rate-limits';
 import { requestId } from './middleware/request-id';
 import { requestLog } from './middleware/request-log';
 import { securityHeaders } from './middleware/security-headers';
 import { webBuild } from './middleware/web-build';
+import { MaterialsController } from './materials/materials.controller';
+import { materialsRoutes } from './materials/materials.routes';
+import { ModelsController } from './models/models.controller';
+import { modelsRoutes } from './models/models.routes';
 import { problemMapper, unknownPath } from './problems/problem-mapper';
 import { ProductionsController } from './productions/productions.controller';
 import { productionsRoutes } from './productions/productions.routes';
+import { RunsController } from './runs/runs.controller';
+import { runsRoutes } from './runs/runs.routes';
+import { ScenesController } from './scenes/scenes.controller';
+import { scenesRoutes } from './scenes/scenes.routes';
 import type { Services } from './services';
 import { SessionsController } from './sessions/sessions.controller';
 import { sessionsRoutes } from './sessions/sessions.routes';
 
-/** Everything that happens to a request, in this order. */
+/** Everything that happens to a request, in this order. Bodies are read by the routes, each with its limit. */
 export function buildApp(config: Config, services: Services, logger: Logger): Express {
   const app = express();
   app.disable('x-powered-by');
@@ -33,13 +40,16 @@ export function buildApp(config: Config, services: Services, logger: Logger): Ex
   app.use(securityHeaders());
   app.use(compression());
   app.use('/api', noStore, everyRequest(config));
-  app.use(jsonBodies());
   app.use(cookieParser());
 
   const signedIn = authenticate(services.sessions);
   app.use(healthRoutes(services.health));
   app.use(sessionsRoutes(new SessionsController(services.sessions, services.memberships), signInLimits(config)));
   app.use(productionsRoutes(new ProductionsController(services.productions), signedIn));
+  app.use(modelsRoutes(new ModelsController(services.models), signedIn));
+  app.use(scenesRoutes(new ScenesController(services.scenes), signedIn));
+  app.use(materialsRoutes(new MaterialsController(services.materials), signedIn));
+  app.use(runsRoutes(new RunsController(services.runs, services.runParts), signedIn));
   app.use(auditRoutes(new AuditController(services.audit), signedIn));
 
   app.use('/api', unknownPath);

@@ -39,8 +39,8 @@ async function main(): Promise<void> {
   const config = readConfig(process.env);
   const logger: Logger = createLogger(config.LOLLOP_LOG_LEVEL);
   const data = await createDataSource(config.DATABASE_URL).initialize();
-  await prepareDatabase(data);
   const services = buildServices(config, data);
+  await prepareDatabase(data, services.materials);
   const server = createServer(buildApp(config, services, logger));
   await listen(server, config.PORT, config.HOST);
   logger.info({ address: server.address() }, 'listening');

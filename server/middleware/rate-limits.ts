@@ -51,12 +51,18 @@ function byAccount(req: Request): string {
   return typeof email === 'string' && email.length <= LONGEST_EMAIL ? normalEmail(email) : '';
 }
 
+export interface SignInLimits {
+  address: RequestHandler;
+  /** Reads the body, so it stands behind the one that parses it. */
+  account: RequestHandler;
+}
+
 /** Two limits, so that neither one address trying many accounts nor many addresses trying one get far. */
-export function signInLimits(config: Config): RequestHandler[] {
+export function signInLimits(config: Config): SignInLimits {
   const minutes = config.LOLLOP_SIGN_IN_WINDOW_MINUTES;
   const detail = 'Too many sign-ins failed. Wait a while, then try again.';
-  return [
-    limit({ minutes, most: config.LOLLOP_SIGN_INS_PER_ADDRESS, key: byAddress, onlyFailures: true, detail }),
-    limit({ minutes, most: config.LOLLOP_SIGN_INS_PER_ACCOUNT, key: byAccount, onlyFailures: true, detail }),
-  ];
+  return {
+    address: limit({ minutes, most: config.LOLLOP_SIGN_INS_PER_ADDRESS, key: byAddress, onlyFailures: true, detail }),
+    account: limit({ minutes, most: config.LOLLOP_SIGN_INS_PER_ACCOUNT, key: byAccount, onlyFailures: true, detail }),
+  };
 }

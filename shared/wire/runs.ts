@@ -2,6 +2,7 @@ import { z } from 'zod';
 import { MAX_FRAMES, MAX_PARTS } from '../limits';
 import { idSchema, instantSchema, pageOf, personRefSchema, sha256Schema } from './common';
 
+/** stopped: not complete, and nothing has arrived for RUN_QUIET_MINUTES; going on makes it baking again. */
 export const runStatusSchema = z.enum(['baking', 'complete', 'stopped']);
 
 /** Values by frame, frame 0 (rest) first; SI. */
@@ -62,15 +63,19 @@ export const runSchema = z.object({
   completedAt: instantSchema.nullable(),
 });
 export type Run = z.infer<typeof runSchema>;
+/** GET /api/productions/:productionId/runs and GET /api/scenes/:sceneId/runs, newest first */
 export const runListSchema = pageOf(runSchema);
 
 /**
- * Binary bodies (application/octet-stream), each with the header `X-Content-SHA256` (hex):
- *   PUT /api/runs/:runId/recipe              how coefficients become the drawn surface
- *   PUT /api/runs/:runId/chunks/:index       in order; the same bytes again are accepted, others refused (409)
- *   PUT /api/runs/:runId/checkpoint?frame=N  latest solver state, replaces the one before
- * and the same paths with GET. POST /api/runs/:runId/complete takes the traces; it is refused (409) while
- * a chunk or the recipe is missing. DELETE /api/runs/:runId throws an unfinished run away.
- * GET /api/runs/:runId/traces → runTracesSchema.
+ * Binary bodies (application/octet-stream), each with the header `X-Content-SHA256` (hex) → 204:
+ *   PUT /api/runs/:runId/recipe              how coefficients become the drawn surface, ≤ MAX_RECIPE_BYTES
+ *   PUT /api/runs/:runId/chunks/:index       in order, ≤ MAX_CHUNK_BYTES
+ *   PUT /api/runs/:runId/checkpoint?frame=N  latest solver state, replaces the one before; N is at most the
+ *                                            number of poses in the chunks that have arrived
+ * Of recipe and chunks the same bytes again are accepted, others refused (409). The same paths with GET
+ * give the bytes back, with that header and an ETag. POST /api/runs/:runId/complete takes the traces
+ * → 200 runSchema; it is refused (409) while a chunk or the recipe is missing, accepted again with the
+ * same traces, and drops the checkpoint. DELETE /api/runs/:runId throws an unfinished run away → 204.
+ * GET /api/runs/:runId/traces → runTracesSchema, 404 until the run is complete.
  */
 export const runCompleteSchema = z.object({ traces: runTracesSchema });
