@@ -18,17 +18,20 @@ import { Tokens } from './sessions/tokens';
 
 export type Services = ReturnType<typeof buildServices>;
 
-/** Puts the services together. Works without HTTP, for seeding and commands too. */
-export function buildServices(config: Config, data: DataSource) {
-  const tokens = new Tokens(config.LOLLOP_TOKEN_SECRET, config.LOLLOP_ACCESS_MINUTES);
-  const people = new PeopleService(data, new Passwords(config.LOLLOP_PASSWORD_COST));
-  const audit = new AuditService(data);
-  const memberships = new MembershipsService(data);
-  const reader = new ModelReader({
+function modelReader(config: Config): ModelReader {
+  return new ModelReader({
     seconds: config.LOLLOP_READ_MODEL_SECONDS,
     megabytes: config.LOLLOP_READ_MODEL_MEGABYTES,
     readers: config.LOLLOP_MODEL_READERS,
   });
+}
+
+/** Puts the services together. Works without HTTP, for seeding and commands too. */
+export function buildServices(config: Config, data: DataSource, reader = modelReader(config)) {
+  const tokens = new Tokens(config.LOLLOP_TOKEN_SECRET, config.LOLLOP_ACCESS_MINUTES);
+  const people = new PeopleService(data, new Passwords(config.LOLLOP_PASSWORD_COST));
+  const audit = new AuditService(data);
+  const memberships = new MembershipsService(data);
   const productions = new ProductionsService(data, memberships);
   const models = new ModelsService(data, memberships, audit, reader);
   const materials = new MaterialsService(data, memberships);

@@ -6,6 +6,7 @@ import { type Config, readConfig } from '../../../server/config';
 import { createDataSource } from '../../../server/data-source';
 import { prepareDatabase } from '../../../server/database';
 import { createLogger } from '../../../server/logger';
+import type { ModelReader } from '../../../server/models/model-reader';
 import { buildServices, type Services } from '../../../server/services';
 import type { Role } from '../../../shared/words';
 import { scratchDatabase } from './database';
@@ -53,7 +54,7 @@ const ROLES: [PersonKey, Role][] = [
 ];
 
 /** The whole server over a database of its own, with people in it. bcrypt is at its cheapest. */
-export async function openDesk(environment: Record<string, string> = {}): Promise<Desk> {
+export async function openDesk(environment: Record<string, string> = {}, reader?: ModelReader): Promise<Desk> {
   const database = await scratchDatabase();
   const config = readConfig({
     DATABASE_URL: database.url,
@@ -64,7 +65,7 @@ export async function openDesk(environment: Record<string, string> = {}): Promis
     ...environment,
   });
   const data = await createDataSource(database.url).initialize();
-  const services = buildServices(config, data);
+  const services = buildServices(config, data, reader);
   await prepareDatabase(data, services.materials);
   const app = buildApp(config, services, createLogger('silent'));
 
