@@ -90,22 +90,48 @@ export function tessellate(patches: readonly Patch[], options: TessellationOptio
 }
 
 /**
- * Triangles for the screen: the finest chord whose vertices stay within `budget`, and at least a few cells a patch
- * so that bending shows. Deterministic for the same patches and budget.
+ * Triangles for the screen: the finest chord whose vertices stay within `budget`, with cells no longer than about a
+ * fortieth of the diagonal so that flat faces can bend. Deterministic for the same patches and budget.
  */
 export function tessellateForDisplay(patches: readonly Patch[], diagonal: number, budget: number): Tessellation {
   const evaluator = new PatchEvaluator();
   let chord = diagonal * 2e-5;
+  let reach = diagonal / 48;
   for (;;) {
-    const minCells = chord < diagonal * 1e-3 ? 3 : 1;
-    const grids = patches.map((patch) => {
-      const [n, m] = gridFor(patch, { chord, minCells, maxCells: 160 }, evaluator);
-      return [Math.max(n, minCells), Math.max(m, minCells)] as [number, number];
+    const grids = patches.map((patch): [number, number] => {
+      const [n, m] = gridFor(patch, { chord, maxCells: 160 }, evaluator);
+      const [u, v] = netLengths(patch);
+      return [Math.max(n, Math.ceil(u / reach)), Math.max(m, Math.ceil(v / reach))];
     });
     const vertices = grids.reduce((sum, [n, m]) => sum + (n + 1) * (m + 1), 0);
     if (vertices <= budget || chord > diagonal) return tessellateGrids(patches, grids, evaluator);
     chord *= Math.max(1.25, (vertices / budget) * 0.8);
+    reach *= 1.15;
   }
+}
+
+/** Longest row of the control net along u and along v: an upper bound of the surface's extent each way. */
+function netLengths(patch: Patch): [number, number] {
+  const { countU, countV, points } = patch;
+  const step = (from: number, to: number) =>
+    Math.hypot(
+      points[3 * to]! - points[3 * from]!,
+      points[3 * to + 1]! - points[3 * from + 1]!,
+      points[3 * to + 2]! - points[3 * from + 2]!,
+    );
+  let u = 0;
+  let v = 0;
+  for (let j = 0; j < countV; j++) {
+    let sum = 0;
+    for (let i = 0; i + 1 < countU; i++) sum += step(i * countV + j, (i + 1) * countV + j);
+    u = Math.max(u, sum);
+  }
+  for (let i = 0; i < countU; i++) {
+    let sum = 0;
+    for (let j = 0; j + 1 < countV; j++) sum += step(i * countV + j, i * countV + j + 1);
+    v = Math.max(v, sum);
+  }
+  return [u, v];
 }
 
 function tessellateGrids(
