@@ -52,6 +52,7 @@ describe('POST /api/scenes/:sceneId/runs', () => {
 
   test('runs that start at the same moment get numbers without gap or repetition, counted by production', async () => {
     const before = (await start(aRunRequest(scene.revisionId)).expect(201)).body.number as number;
+    await desk.openConnections();
     const answers = await Promise.all(Array.from({ length: 8 }, () => start(aRunRequest(scene.revisionId))));
     const numbers = answers.map(({ body }) => body.number as number).sort((a, b) => a - b);
     expect(numbers).toEqual(Array.from({ length: 8 }, (_, i) => before + 1 + i));
@@ -114,6 +115,7 @@ describe('chunks', () => {
 
   test('two senders of the same chunk at once: both are content with the same bytes, one wins with others', async () => {
     const id = await aRun(desk, FRAMES, scene);
+    await desk.openConnections();
     const same = await Promise.all([put(`${id}/chunks/0`, someBytes(0)), put(`${id}/chunks/0`, someBytes(0))]);
     expect(same.map(({ status }) => status)).toEqual([204, 204]);
     const others = await Promise.all([put(`${id}/chunks/1`, someBytes(1)), put(`${id}/chunks/1`, someBytes(2))]);
@@ -192,6 +194,28 @@ describe('POST /api/runs/:runId/complete', () => {
     await td().delete(`/api/runs/${id}`).expect(409);
     await expect(desk.rows('UPDATE run SET frames = 1 WHERE id = $1', [id])).rejects.toThrow('written once');
     await expect(desk.rows("UPDATE run_chunk SET content = '\\x00' WHERE run_id = $1", [id])).rejects.toThrow('written once');
+  });
+});
+
+describe('at the same moment', () => {
+  test('completing twice completes once, and both hear that it is complete', async () => {
+    const id = await aRun(desk, FRAMES, scene);
+    await sendParts(desk, id);
+    await desk.openConnections();
+    const answers = await Promise.all([complete(id), complete(id), complete(id)]);
+    expect(answers.map(({ status }) => status)).toEqual([200, 200, 200]);
+    const events = await desk.rows("SELECT 1 FROM audit_event WHERE kind = 'run-completed' AND details->>'runId' = $1", [id]);
+    expect(events).toHaveLength(1);
+  });
+
+  test('completing and throwing away: whichever comes first holds', async () => {
+    const id = await aRun(desk, FRAMES, scene);
+    await sendParts(desk, id);
+    await desk.openConnections();
+    const [completed, removed] = await Promise.all([complete(id), td().delete(`/api/runs/${id}`)]);
+    const left = await desk.rows('SELECT status FROM run WHERE id = $1', [id]);
+    if (removed.status === 204) expect([completed.status, left]).toEqual([404, []]);
+    else expect([completed.status, removed.status, left]).toEqual([200, 409, [{ status: 'complete' }]]);
   });
 });
 

@@ -128,6 +128,7 @@ describe('POST /api/scenes/:sceneId/revisions', () => {
 
   test('of saves at the same moment one wins, the others hear of it', async () => {
     const { sceneId, modelId: own } = await aScene(desk);
+    await desk.openConnections();
     const answers = await Promise.all(
       Array.from({ length: 5 }, (_, i) => save(sceneId, { basedOn: 1, remark: String(i), document: aDocument(own) })),
     );

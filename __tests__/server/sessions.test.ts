@@ -76,6 +76,7 @@ describe('POST /api/session', () => {
     const compared = jest.spyOn(jest.requireActual<typeof import('bcryptjs')>('bcryptjs'), 'compare');
     await signIn({ email: 'nobody@studio.example', password: PASSWORD }).expect(401);
     expect(compared).toHaveBeenCalledTimes(1);
+    expect(compared).toHaveBeenCalledWith(PASSWORD, expect.stringMatching(/^\$2[aby]\$04\$.{53}$/));
     compared.mockRestore();
   });
 
@@ -150,6 +151,7 @@ describe('POST /api/session/refresh', () => {
 
   test('two tabs that send one token at the same moment both stay signed in, with one successor', async () => {
     const cookie = await freshCookie();
+    await desk.openConnections();
     const answers = await Promise.all([refresh(cookie), refresh(cookie), refresh(cookie)]);
     expect(answers.map(({ status }) => status)).toEqual([200, 200, 200]);
     expect(new Set(answers.map(cookieOf)).size).toBe(1);

@@ -44,6 +44,8 @@ export interface Desk {
     delete: (path: string) => request.Test;
   };
   rows: <T = Record<string, unknown>>(sql: string, values?: unknown[]) => Promise<T[]>;
+  /** Opens every connection of the pool, so that requests sent together really run side by side. */
+  openConnections: () => Promise<void>;
   close: () => Promise<void>;
 }
 
@@ -100,6 +102,9 @@ export async function openDesk(environment: Record<string, string> = {}, reader?
     elsewhere,
     as,
     rows: (sql, values) => data.query(sql, values),
+    openConnections: async () => {
+      await Promise.all(Array.from({ length: 10 }, () => data.query('SELECT pg_sleep(0.1)')));
+    },
     close: async () => {
       await data.destroy();
       await database.drop();
