@@ -107,6 +107,9 @@ export interface SurfaceSamples {
   areas: Float64Array;
   patch: Int32Array;
   body: Int32Array;
+  /** count: 1 on the outside of everything, 0 where the surface runs inside its own or another body:
+   *  loads, wind and contact act on exposed samples only, supports may hold any. */
+  exposed: Uint8Array;
   rows: BasisRows;
   /** Rows of the two tangents, for followed normals: N along ∂/∂t1 and ∂/∂t2, t1 × t2 = normal · area. */
   tangent1: BasisRows;
