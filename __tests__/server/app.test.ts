@@ -7,6 +7,15 @@ import { buildApp } from '../../server/app';
 import { createLogger } from '../../server/logger';
 import { type Desk, openDesk, PASSWORD } from './support/desk';
 
+function collector(): { lines: string[]; sink: Writable } {
+  const lines: string[] = [];
+  const write = (chunk: Buffer, _encoding: string, done: () => void) => {
+    lines.push(chunk.toString());
+    done();
+  };
+  return { lines, sink: new Writable({ write }) };
+}
+
 let desk: Desk;
 let web: string;
 
@@ -106,13 +115,7 @@ describe('the web application', () => {
 
 describe('failures', () => {
   test('an exception stays in the log; the person gets a sentence and the id to find it by', async () => {
-    const lines: string[] = [];
-    const sink = new Writable({
-      write(chunk: Buffer, _encoding, done) {
-        lines.push(chunk.toString());
-        done();
-      },
-    });
+    const { lines, sink } = collector();
     const services = { ...desk.services, productions: Object.create(desk.services.productions) };
     services.productions.list = () => Promise.reject(new Error('inner workings: table person'));
     const app = buildApp(desk.config, services, createLogger('info', sink));
@@ -128,14 +131,17 @@ describe('failures', () => {
     expect(log).not.toContain(token);
   });
 
+  test('a failed query leaves its parameters out of the log', async () => {
+    const { lines, sink } = collector();
+    const failure = await desk.rows('SELECT $1::text FROM nowhere', ['sent by somebody']).catch((error: unknown) => error);
+    createLogger('info', sink).error({ err: failure }, 'request failed');
+    expect(lines.join('')).toContain('nowhere');
+    expect(lines.join('')).toContain('42P01');
+    expect(lines.join('')).not.toContain('sent by somebody');
+  });
+
   test('the log has a line a request, with route and person, and never what was sent', async () => {
-    const lines: string[] = [];
-    const sink = new Writable({
-      write(chunk: Buffer, _encoding, done) {
-        lines.push(chunk.toString());
-        done();
-      },
-    });
+    const { lines, sink } = collector();
     const app = buildApp(desk.config, desk.services, createLogger('info', sink));
     const { email } = desk.people.artist;
     const signedIn = await request(app).post('/api/session').send({ email, password: PASSWORD }).expect(200);

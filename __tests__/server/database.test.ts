@@ -67,8 +67,18 @@ describe('the database itself refuses', () => {
 
   test('to lose a model that scenes stand on, or a person who made something', async () => {
     const { modelId } = await aScene(desk);
-    await refused('DELETE FROM model WHERE id = $1', [modelId], 'scene_model');
+    await refused('DELETE FROM model WHERE id = $1', [modelId], 'scene_model_in_production');
     await expect(desk.rows('DELETE FROM person WHERE id = $1', [desk.people.technicalDirector.id])).rejects.toThrow('violates foreign key');
+  });
+
+  test('a scene with a model of another production, and a run of a revision of another scene', async () => {
+    const { sceneId } = await aScene(desk);
+    const foreign = await aModel(desk, desk.elsewhere, 'outsider');
+    await refused('UPDATE scene SET model_id = $2 WHERE id = $1', [sceneId, foreign], 'scene_model_in_production');
+    const other = await aScene(desk);
+    const run = await aRun(desk);
+    await refused('UPDATE run SET revision_id = $2 WHERE id = $1', [run, other.revisionId], 'run_revision_of_scene');
+    await refused('UPDATE run SET production_id = $2, number = 999 WHERE id = $1', [run, desk.elsewhere], 'run_scene_in_production');
   });
 
   test('a unit that is no length', async () => {

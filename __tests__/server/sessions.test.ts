@@ -186,12 +186,15 @@ describe('POST /api/session/refresh', () => {
     await refresh(other).expect(200);
   });
 
-  test('a session ends on its day, however often it was renewed', async () => {
+  test('a session ends on its day, however often it was renewed, and the next sign-in clears it away', async () => {
     const next = cookieOf(await refresh(await freshCookie()).expect(200));
     await desk.rows("UPDATE refresh_session SET created_at = now() - interval '15 days', expires_at = now() - interval '1 second'");
     await refresh(next).expect(401);
+    const ended = 'SELECT 1 FROM refresh_session WHERE person_id = $1 AND expires_at < now()';
+    expect(await desk.rows(ended, [desk.people.artist.id])).not.toEqual([]);
     const { email } = desk.people.artist;
     desk.people.artist.token = (await desk.services.sessions.signIn(email, PASSWORD, undefined)).accessToken;
+    expect(await desk.rows(ended, [desk.people.artist.id])).toEqual([]);
   });
 });
 

@@ -1,4 +1,4 @@
-import { Check, Column, CreateDateColumn, Entity, Index, JoinColumn, ManyToOne, PrimaryGeneratedColumn, type Relation } from 'typeorm';
+import { Check, Column, CreateDateColumn, Entity, Index, JoinColumn, ManyToOne, PrimaryGeneratedColumn, type Relation, Unique } from 'typeorm';
 import type { ImportReport, Model as ModelWire } from '../../shared/wire/models';
 import { Person } from '../people/person.entity';
 import { Production } from '../productions/production.entity';
@@ -10,6 +10,7 @@ import { Production } from '../productions/production.entity';
 @Check('model_sha256_fits', "sha256 = encode(sha256(original), 'hex')")
 @Check('model_unit_positive', "unit > 0 AND unit < 'Infinity'::double precision")
 @Check('model_has_patches', 'patch_count > 0')
+@Unique('model_in_production', ['productionId', 'id'])
 @Index('model_of_production', ['productionId', 'createdAt', 'id'])
 export class Model {
   @PrimaryGeneratedColumn('uuid', { primaryKeyConstraintName: 'model_pk' })

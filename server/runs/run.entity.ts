@@ -76,12 +76,20 @@ export class Run {
   @JoinColumn({ name: 'production_id', foreignKeyConstraintName: 'run_production' })
   production!: Relation<Production>;
 
+  /** Both columns, so that the scene is of the same production. */
   @ManyToOne(() => Scene, { onDelete: 'RESTRICT' })
-  @JoinColumn({ name: 'scene_id', foreignKeyConstraintName: 'run_scene' })
+  @JoinColumn([
+    { name: 'production_id', referencedColumnName: 'productionId', foreignKeyConstraintName: 'run_scene_in_production' },
+    { name: 'scene_id', referencedColumnName: 'id', foreignKeyConstraintName: 'run_scene_in_production' },
+  ])
   scene!: Relation<Scene>;
 
+  /** Both columns, so that the revision is of that scene. */
   @ManyToOne(() => SceneRevision, { onDelete: 'RESTRICT' })
-  @JoinColumn({ name: 'revision_id', foreignKeyConstraintName: 'run_revision' })
+  @JoinColumn([
+    { name: 'scene_id', referencedColumnName: 'sceneId', foreignKeyConstraintName: 'run_revision_of_scene' },
+    { name: 'revision_id', referencedColumnName: 'id', foreignKeyConstraintName: 'run_revision_of_scene' },
+  ])
   revision!: Relation<SceneRevision>;
 
   @ManyToOne(() => Person, { onDelete: 'RESTRICT' })

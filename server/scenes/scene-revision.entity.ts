@@ -16,6 +16,7 @@ import { Scene } from './scene.entity';
 /** Written once; a trigger refuses changes. */
 @Entity('scene_revision')
 @Unique('scene_revision_number_once', ['sceneId', 'number'])
+@Unique('scene_revision_in_scene', ['sceneId', 'id'])
 @Check('scene_revision_number_counts', 'number >= 1')
 @Check('scene_revision_document_object', "jsonb_typeof(document) = 'object'")
 export class SceneRevision {

@@ -1,4 +1,4 @@
-import { Check, Column, CreateDateColumn, Entity, Index, JoinColumn, ManyToOne, PrimaryGeneratedColumn, type Relation } from 'typeorm';
+import { Check, Column, CreateDateColumn, Entity, Index, JoinColumn, ManyToOne, PrimaryGeneratedColumn, type Relation, Unique } from 'typeorm';
 import { Model } from '../models/model.entity';
 import { Person } from '../people/person.entity';
 import { Production } from '../productions/production.entity';
@@ -7,6 +7,7 @@ import type { SceneRevision } from './scene-revision.entity';
 @Entity('scene')
 @Check('scene_name_given', 'length(trim(name)) > 0')
 @Check('scene_latest_counts', 'latest_number >= 1')
+@Unique('scene_in_production', ['productionId', 'id'])
 @Index('scene_of_production', ['productionId', 'createdAt', 'id'])
 export class Scene {
   @PrimaryGeneratedColumn('uuid', { primaryKeyConstraintName: 'scene_pk' })
@@ -35,8 +36,12 @@ export class Scene {
   @JoinColumn({ name: 'production_id', foreignKeyConstraintName: 'scene_production' })
   production!: Relation<Production>;
 
+  /** Both columns, so that the model is of the same production. */
   @ManyToOne(() => Model, { onDelete: 'RESTRICT' })
-  @JoinColumn({ name: 'model_id', foreignKeyConstraintName: 'scene_model' })
+  @JoinColumn([
+    { name: 'production_id', referencedColumnName: 'productionId', foreignKeyConstraintName: 'scene_model_in_production' },
+    { name: 'model_id', referencedColumnName: 'id', foreignKeyConstraintName: 'scene_model_in_production' },
+  ])
   model!: Relation<Model>;
 
   @ManyToOne(() => Person, { onDelete: 'RESTRICT' })

@@ -1,4 +1,4 @@
-import type { DataSource, EntityManager } from 'typeorm';
+import { type DataSource, type EntityManager, LessThan } from 'typeorm';
 import type { AuditService } from '../audit/audit.service';
 import type { Actor } from '../people/actor';
 import type { PeopleService } from '../people/people.service';
@@ -44,6 +44,7 @@ export class SessionsService {
     const refreshToken = this.tokens.firstRefresh();
     const expiresAt = new Date(Date.now() + this.sessionDays * DAY);
     const session = await this.data.transaction(async (manager) => {
+      await manager.delete(RefreshSession, { personId: person.id, expiresAt: LessThan(new Date()) });
       const begun = await manager.save(manager.create(RefreshSession, { personId: person.id, expiresAt, revokedAt: null }));
       await manager.insert(RefreshToken, { hash: this.tokens.hash(refreshToken), sessionId: begun.id, usedAt: null });
       await this.audit.record(manager, { kind: 'signed-in', personId: person.id, address });
