@@ -1,5 +1,6 @@
 import type { ObjectLiteral, SelectQueryBuilder } from 'typeorm';
 import { z } from 'zod';
+import { plainStrings } from '../plain-text';
 import { InvalidRequest } from '../problems/domain-errors';
 
 export interface PageRequest {
@@ -27,7 +28,7 @@ const encode = (key: Key) => Buffer.from(JSON.stringify(key)).toString('base64ur
 function decode(cursor: string, type: keyof typeof KEY_PART, tieType: keyof typeof KEY_PART): Key {
   try {
     const schema = z.tuple([KEY_PART[type], KEY_PART[tieType]]);
-    return schema.parse(JSON.parse(Buffer.from(cursor, 'base64url').toString('utf8')));
+    return schema.parse(JSON.parse(Buffer.from(cursor, 'base64url').toString('utf8'), plainStrings));
   } catch {
     throw new InvalidRequest('The page mark does not fit.', [
       { pointer: '/query/cursor', detail: 'Use nextCursor of the page before, or leave it out.' },
