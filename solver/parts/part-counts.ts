@@ -1,6 +1,6 @@
 export interface BodySize {
-  /** m³ */
-  volume: number;
+  /** What its parts are shared by, m²: volume^⅔, for a sheet a quarter of its area. */
+  size: number;
   /** Pa */
   youngsModulus: number;
 }
@@ -9,14 +9,14 @@ export interface BodySize {
 const STIFF = 300;
 
 /**
- * Splits `total` parts over bodies in proportion to volume^⅔ (largest remainder), at least one each;
+ * Splits `total` parts over bodies in proportion to their size (largest remainder), at least one each;
  * a body far stiffer than the softest one gets exactly one, unless all are alike. With more bodies
  * than parts the total grows to one a body.
  */
 export function splitParts(total: number, bodies: readonly BodySize[]): number[] {
   const counts = bodies.map(() => 1);
   const softest = Math.min(...bodies.map((b) => b.youngsModulus));
-  const share = bodies.map((b) => (b.youngsModulus >= STIFF * softest ? 0 : Math.cbrt(b.volume) ** 2));
+  const share = bodies.map((b) => (b.youngsModulus >= STIFF * softest ? 0 : b.size));
   const sum = share.reduce((a, b) => a + b, 0);
   const spare = total - bodies.length;
   if (spare <= 0 || !(sum > 0)) return counts;

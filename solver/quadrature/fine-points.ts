@@ -79,3 +79,10 @@ export function finePointsOf(moments: VoxelMoments): FinePoints {
   }
   return { count: 4 * filled, positions, volumes };
 }
+
+/** m³ */
+export function totalVolume(fine: FinePoints): number {
+  let sum = 0;
+  for (let k = 0; k < fine.count; k++) sum += fine.volumes[k]!;
+  return sum;
+}

@@ -162,6 +162,8 @@ export interface SetupReport {
 export interface Prepared {
   /** metres, turned outward */
   patches: Patch[];
+  /** patch: 1 when it was turned over to face outward */
+  turned: Uint8Array;
   parts: Parts;
   bodies: Body[];
   points: QuadraturePoints;

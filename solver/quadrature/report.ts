@@ -1,4 +1,5 @@
 import type { FinePoints } from './fine-points';
+import type { Piece } from './pieces';
 import type { SetupReport } from './prepared';
 
 /** Volume (m³), centroid (m) and second moments about it (m⁵; xx, yy, zz, xy, yz, zx) of all bodies' fine points. */
@@ -28,4 +29,35 @@ export function massReport(fine: readonly FinePoints[]): Pick<SetupReport, 'volu
     }
   }
   return { volume, centroid, secondMoments };
+}
+
+/** What the person should know about sides and open pieces. `thickness` of sheets in m. */
+export function pieceRemarks(turned: Uint8Array, solids: readonly { piece: Piece; sheet: boolean }[], thickness: number): string[] {
+  const remarks: string[] = [];
+  const over = turned.reduce((a, b) => a + b, 0);
+  if (over > 0) remarks.push(`${over} of ${turned.length} patches faced inward and were turned over.`);
+  const open = solids.filter(({ piece, sheet }) => !piece.closed && !sheet);
+  if (open.length > 0) {
+    remarks.push(
+      `${open.length === 1 ? 'One piece has' : `${open.length} pieces have`} open edges and ${open.length === 1 ? 'is' : 'are'} treated as solid: patches ${patchList(open)}.`,
+    );
+  }
+  const sheets = solids.filter(({ sheet }) => sheet);
+  if (sheets.length > 0) {
+    remarks.push(
+      `${sheets.length === 1 ? 'One piece encloses' : `${sheets.length} pieces enclose`} nothing and ${sheets.length === 1 ? 'is' : 'are'} treated as ${sheets.length === 1 ? 'a sheet' : 'sheets'} ${lengthText(thickness)} thick, 1 % of the model's diagonal: patches ${patchList(sheets)}.`,
+    );
+  }
+  return remarks;
+}
+
+function patchList(solids: readonly { piece: Piece }[]): string {
+  const numbers = solids.flatMap(({ piece }) => Array.from(piece.patches)).sort((a, b) => a - b);
+  const shown = numbers.slice(0, 12).join(', ');
+  return numbers.length > 12 ? `${shown} and ${numbers.length - 12} more` : shown;
+}
+
+function lengthText(metres: number): string {
+  if (metres >= 1) return `${Number(metres.toPrecision(3))} m`;
+  return metres >= 0.01 ? `${Number((100 * metres).toPrecision(3))} cm` : `${Number((1000 * metres).toPrecision(3))} mm`;
 }

@@ -18,17 +18,24 @@ const LEAST_CELLS = 2;
 const MOST_CELLS = 16;
 const GAUSS = 0.5 / Math.sqrt(3);
 
-/**
- * Samples over all patches: every patch in m × n parameter cells, 2 × 2 Gauss points a cell, so that
- * areas and second moments of flat faces are exact. About 1,600 in all, shared by area, at least 16 a patch.
- */
+/** About 1,600 samples in all. */
 export function samplePlaces(patches: readonly Patch[]): SamplePlaces {
+  return patchPlaces(patches, TOTAL, MOST_CELLS);
+}
+
+/**
+ * About `total` places over the patches, shared by area, at least 16 a patch: every patch in n × m
+ * parameter cells (at most `mostCells` a direction), 2 × 2 Gauss points a cell, so that areas and
+ * second moments of flat faces are exact.
+ */
+export function patchPlaces(patches: readonly Patch[], total: number, mostCells: number): SamplePlaces {
   const evaluator = new PatchEvaluator();
   const sizes = patches.map((patch) => patchSize(patch, evaluator));
-  const total = sizes.reduce((sum, s) => sum + s.area, 0);
-  const grids = sizes.map(({ area, lengthU, lengthV }) => {
-    const cells = Math.max(LEAST_CELLS * LEAST_CELLS, (TOTAL / 4) * (area / (total || 1)));
-    const ratio = Math.sqrt(lengthU / (lengthV || lengthU || 1)) || 1;
+  const area = sizes.reduce((sum, s) => sum + s.area, 0);
+  const clamp = (cells: number) => Math.min(mostCells, Math.max(LEAST_CELLS, cells));
+  const grids = sizes.map((size) => {
+    const cells = Math.max(LEAST_CELLS * LEAST_CELLS, (total / 4) * (size.area / (area || 1)));
+    const ratio = Math.sqrt(size.lengthU / (size.lengthV || size.lengthU || 1)) || 1;
     const n = clamp(Math.round(Math.sqrt(cells) * ratio));
     const m = clamp(Math.round(cells / n));
     return [n, m] as const;
@@ -72,10 +79,6 @@ export function samplePlaces(patches: readonly Patch[]): SamplePlaces {
     areas: areas.slice(0, count),
     patch: patchOf.slice(0, count),
   };
-}
-
-function clamp(cells: number): number {
-  return Math.min(MOST_CELLS, Math.max(LEAST_CELLS, cells));
 }
 
 /** Area (m²) and mean side lengths (m) of a patch, from a coarse grid. */

@@ -1,5 +1,5 @@
 import type { Patch } from '../geometry/patch';
-import { tessellateForDisplay } from '../geometry/tessellate';
+import { type Tessellation, tessellateForDisplay } from '../geometry/tessellate';
 import type { BasisField } from '../weights/basis-field';
 import type { SurfaceMap } from './prepared';
 import { RowBuilder } from './rows';
@@ -13,9 +13,13 @@ export interface DisplaySettings {
 
 export const VERTEX_BUDGET = 20000;
 
-/** The drawn surface and how it follows the parts. Patches in metres, turned outward. */
-export function surfaceMap(patches: readonly Patch[], bodyOfPatch: Int32Array, field: BasisField, display: DisplaySettings): SurfaceMap {
-  const mesh = tessellateForDisplay(patches, display.diagonal, display.vertexBudget);
+/** Triangles of the drawn surface. Patches in metres, turned outward. */
+export function displayMesh(patches: readonly Patch[], display: DisplaySettings): Tessellation {
+  return tessellateForDisplay(patches, display.diagonal, display.vertexBudget);
+}
+
+/** The drawn surface and how it follows the parts. */
+export function surfaceMap(mesh: Tessellation, bodyOfPatch: Int32Array, field: BasisField): SurfaceMap {
   const count = mesh.patch.length;
   const rows = new RowBuilder(field.basis, count);
   const dominantPart = new Int32Array(count);

@@ -18,23 +18,33 @@ export function neighbourSpacing(centres: Float64Array, from: number, count: num
   return out;
 }
 
+/** Starts the radii of one body's parts at 1.5 × neighbour spacing; a lone part is left to `coverPlaces`. */
+export function startRadii(parts: Parts, body: Pick<Body, 'firstPart' | 'partCount'>): void {
+  const spacing = neighbourSpacing(parts.centres, body.firstPart, body.partCount);
+  for (let i = 0; i < body.partCount; i++) parts.radii[body.firstPart + i] = FACTOR * spacing[i]!;
+}
+
 /**
- * Support radii of one body's parts: 1.5 × neighbour spacing, then enlarged until every one of the
- * places (3 · n, m) sees two parts within 0.8 R, the two that are relatively nearest growing. A lone
- * part reaches twice as far as its farthest place.
+ * Enlarges the radii of one body until each of its places (3 a place, m) sees two parts within
+ * 0.8 R, the two that are relatively nearest growing; a lone part reaches twice as far as the
+ * farthest place. `of` names the body of every place (null: all are this one's).
  */
-export function fitRadii(parts: Parts, body: Pick<Body, 'firstPart' | 'partCount'>, places: Float64Array): void {
+export function coverPlaces(
+  parts: Parts,
+  bodyNumber: number,
+  body: Pick<Body, 'firstPart' | 'partCount'>,
+  places: Float64Array,
+  of: Int32Array | null,
+): void {
   const { centres, radii } = parts;
   const { firstPart, partCount } = body;
-  const spacing = neighbourSpacing(centres, firstPart, partCount);
-  for (let i = 0; i < partCount; i++) radii[firstPart + i] = FACTOR * spacing[i]!;
-  if (partCount === 1) {
-    let far = 0;
-    for (let o = 0; o < places.length; o += 3) far = Math.max(far, placeDistance(places, o, centres, firstPart));
-    radii[firstPart] = Math.max(2 * far, Number.MIN_VALUE);
-    return;
-  }
-  for (let o = 0; o < places.length; o += 3) {
+  for (let k = 0; 3 * k < places.length; k++) {
+    if (of !== null && of[k] !== bodyNumber) continue;
+    const o = 3 * k;
+    if (partCount === 1) {
+      radii[firstPart] = Math.max(radii[firstPart]!, 2 * placeDistance(places, o, centres, firstPart));
+      continue;
+    }
     let first = -1;
     let second = -1;
     let firstRatio = Infinity;

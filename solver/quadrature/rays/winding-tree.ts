@@ -25,8 +25,9 @@ const FAR = 2;
 
 export function buildWindingTree(soup: TriangleSoup, list: Int32Array): WindingTree {
   const n = list.length;
-  const order = list.slice();
-  const centre = centroids(soup);
+  // places in the list, reordered node by node
+  const order = Int32Array.from(list, (_, k) => k);
+  const centre = centroids(soup, list);
   const maxNodes = Math.max(1, 2 * Math.ceil((2 * n) / LEAF) + 1);
   const first = new Int32Array(maxNodes);
   const end = new Int32Array(maxNodes);
@@ -64,12 +65,13 @@ export function buildWindingTree(soup: TriangleSoup, list: Int32Array): WindingT
   const corners = new Float64Array(9 * n);
   for (let k = 0; k < n; k++) {
     for (let c = 0; c < 3; c++) {
-      const v = 3 * soup.triangles[3 * order[k]! + c]!;
+      const v = 3 * soup.triangles[3 * list[order[k]!]! + c]!;
       for (let d = 0; d < 3; d++) corners[9 * k + 3 * c + d] = soup.positions[v + d]!;
     }
   }
+  const facts = triangleFacts(corners);
   const far = new Float64Array(16 * nodeCount);
-  for (let node = 0; node < nodeCount; node++) expand(far, 16 * node, corners, first[node]!, end[node]!);
+  for (let node = 0; node < nodeCount; node++) expand(far, 16 * node, corners, facts, first[node]!, end[node]!);
   return { nodeCount, first, end, second, far, corners };
 }
 
@@ -134,56 +136,92 @@ function solidAngleHalf(c: Float64Array, o: number, x: number, y: number, z: num
   return volume === 0 ? 0 : Math.atan2(volume, denominator);
 }
 
-/** Fills one node's far-field terms from its triangles. */
-function expand(far: Float64Array, o: number, c: Float64Array, from: number, to: number): void {
+/** Fills one node's far-field terms from its triangles ([triangle][7] area, area normal, centroid). */
+function expand(far: Float64Array, o: number, corners: Float64Array, facts: Float64Array, from: number, to: number): void {
   let total = 0;
+  let cx = 0;
+  let cy = 0;
+  let cz = 0;
+  let nx = 0;
+  let ny = 0;
+  let nz = 0;
   for (let k = from; k < to; k++) {
-    const q = 9 * k;
-    const [nx, ny, nz] = areaNormal(c, q);
-    const area = Math.hypot(nx, ny, nz) + Number.MIN_VALUE;
+    const f = 7 * k;
+    const area = facts[f]! + Number.MIN_VALUE;
     total += area;
-    for (let d = 0; d < 3; d++) {
-      far[o + d]! += (area * (c[q + d]! + c[q + 3 + d]! + c[q + 6 + d]!)) / 3;
-      far[o + 4 + d]! += d === 0 ? nx : d === 1 ? ny : nz;
-    }
+    nx += facts[f + 1]!;
+    ny += facts[f + 2]!;
+    nz += facts[f + 3]!;
+    cx += area * facts[f + 4]!;
+    cy += area * facts[f + 5]!;
+    cz += area * facts[f + 6]!;
   }
-  for (let d = 0; d < 3; d++) far[o + d]! /= total || 1;
+  const inverse = 1 / (total || 1);
+  cx *= inverse;
+  cy *= inverse;
+  cz *= inverse;
+  far[o] = cx;
+  far[o + 1] = cy;
+  far[o + 2] = cz;
+  far[o + 4] = nx;
+  far[o + 5] = ny;
+  far[o + 6] = nz;
   let radius2 = 0;
   for (let k = from; k < to; k++) {
-    const q = 9 * k;
-    const normal = areaNormal(c, q);
-    for (let d = 0; d < 3; d++) {
-      const offset = (c[q + d]! + c[q + 3 + d]! + c[q + 6 + d]!) / 3 - far[o + d]!;
-      for (let e = 0; e < 3; e++) far[o + 7 + 3 * e + d]! += normal[e]! * offset;
+    const f = 7 * k;
+    const ox = facts[f + 4]! - cx;
+    const oy = facts[f + 5]! - cy;
+    const oz = facts[f + 6]! - cz;
+    for (let e = 0; e < 3; e++) {
+      const normal = facts[f + 1 + e]!;
+      far[o + 7 + 3 * e]! += normal * ox;
+      far[o + 8 + 3 * e]! += normal * oy;
+      far[o + 9 + 3 * e]! += normal * oz;
     }
-    for (let v = 0; v < 3; v++) {
-      const dx = c[q + 3 * v]! - far[o]!;
-      const dy = c[q + 3 * v + 1]! - far[o + 1]!;
-      const dz = c[q + 3 * v + 2]! - far[o + 2]!;
-      radius2 = Math.max(radius2, dx * dx + dy * dy + dz * dz);
+    for (let q = 9 * k; q < 9 * k + 9; q += 3) {
+      const dx = corners[q]! - cx;
+      const dy = corners[q + 1]! - cy;
+      const dz = corners[q + 2]! - cz;
+      const r2 = dx * dx + dy * dy + dz * dz;
+      if (r2 > radius2) radius2 = r2;
     }
   }
   far[o + 3] = FAR * FAR * radius2;
 }
 
-function areaNormal(c: Float64Array, q: number): [number, number, number] {
-  const ux = c[q + 3]! - c[q]!;
-  const uy = c[q + 4]! - c[q + 1]!;
-  const uz = c[q + 5]! - c[q + 2]!;
-  const vx = c[q + 6]! - c[q]!;
-  const vy = c[q + 7]! - c[q + 1]!;
-  const vz = c[q + 8]! - c[q + 2]!;
-  return [0.5 * (uy * vz - uz * vy), 0.5 * (uz * vx - ux * vz), 0.5 * (ux * vy - uy * vx)];
+function triangleFacts(c: Float64Array): Float64Array {
+  const count = c.length / 9;
+  const out = new Float64Array(7 * count);
+  for (let k = 0; k < count; k++) {
+    const q = 9 * k;
+    const ux = c[q + 3]! - c[q]!;
+    const uy = c[q + 4]! - c[q + 1]!;
+    const uz = c[q + 5]! - c[q + 2]!;
+    const vx = c[q + 6]! - c[q]!;
+    const vy = c[q + 7]! - c[q + 1]!;
+    const vz = c[q + 8]! - c[q + 2]!;
+    const nx = 0.5 * (uy * vz - uz * vy);
+    const ny = 0.5 * (uz * vx - ux * vz);
+    const nz = 0.5 * (ux * vy - uy * vx);
+    out[7 * k] = Math.sqrt(nx * nx + ny * ny + nz * nz);
+    out[7 * k + 1] = nx;
+    out[7 * k + 2] = ny;
+    out[7 * k + 3] = nz;
+    for (let d = 0; d < 3; d++) out[7 * k + 4 + d] = (c[q + d]! + c[q + 3 + d]! + c[q + 6 + d]!) / 3;
+  }
+  return out;
 }
 
-function centroids(soup: TriangleSoup): Float64Array {
-  const count = soup.patch.length;
-  const out = new Float64Array(3 * count);
-  for (let t = 0; t < count; t++) {
-    for (let k = 0; k < 3; k++) {
-      const v = 3 * soup.triangles[3 * t + k]!;
-      for (let d = 0; d < 3; d++) out[3 * t + d]! += soup.positions[v + d]! / 3;
-    }
+/** Centroids of the listed triangles, 3 a place in the list. */
+function centroids(soup: TriangleSoup, list: Int32Array): Float64Array {
+  const { positions: p, triangles } = soup;
+  const out = new Float64Array(3 * list.length);
+  for (let k = 0; k < list.length; k++) {
+    const t = 3 * list[k]!;
+    const a = 3 * triangles[t]!;
+    const b = 3 * triangles[t + 1]!;
+    const c = 3 * triangles[t + 2]!;
+    for (let d = 0; d < 3; d++) out[3 * k + d] = (p[a + d]! + p[b + d]! + p[c + d]!) / 3;
   }
   return out;
 }
