@@ -20,6 +20,7 @@ import { modelsRoutes } from './models/models.routes';
 import { problemMapper, unknownPath } from './problems/problem-mapper';
 import { ProductionsController } from './productions/productions.controller';
 import { productionsRoutes } from './productions/productions.routes';
+import { RunPartsController } from './runs/run-parts.controller';
 import { RunsController } from './runs/runs.controller';
 import { runsRoutes } from './runs/runs.routes';
 import { ScenesController } from './scenes/scenes.controller';
@@ -49,7 +50,7 @@ export function buildApp(config: Config, services: Services, logger: Logger): Ex
   app.use(modelsRoutes(new ModelsController(services.models), signedIn));
   app.use(scenesRoutes(new ScenesController(services.scenes), signedIn));
   app.use(materialsRoutes(new MaterialsController(services.materials), signedIn));
-  app.use(runsRoutes(new RunsController(services.runs, services.runParts), signedIn));
+  app.use(runsRoutes(new RunsController(services.runs), new RunPartsController(services.runParts), signedIn));
   app.use(auditRoutes(new AuditController(services.audit), signedIn));
 
   app.use('/api', unknownPath);

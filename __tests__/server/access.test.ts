@@ -17,7 +17,13 @@ interface Case {
 }
 
 /** Routes that need no access token; their own tests say what guards them. */
-const OPEN = ['GET /api/health/live', 'GET /api/health/ready', 'POST /api/session', 'POST /api/session/refresh', 'DELETE /api/session'];
+const OPEN = [
+  'GET /api/health/live',
+  'GET /api/health/ready',
+  'POST /api/session',
+  'POST /api/session/refresh',
+  'DELETE /api/session',
+];
 const ALLOWED: Record<Least, PersonKey[]> = {
   artist: ['artist', 'technicalDirector', 'lead', 'administrator'],
   technicalDirector: ['technicalDirector', 'lead', 'administrator'],
@@ -32,7 +38,10 @@ beforeAll(async () => {
   const scene = await aScene(desk);
   Object.assign(ids, { scene: scene.sceneId, revision: scene.revisionId, model: scene.modelId });
   ids.run = await aRun(desk, 30, scene);
-  await desk.services.runParts.putCheckpoint(desk.people.technicalDirector, ids.run, 0, { bytes, sha256: sha256(bytes) });
+  await desk.services.runParts.putCheckpoint(desk.people.technicalDirector, ids.run, 0, {
+    bytes,
+    sha256: sha256(bytes),
+  });
   ids.complete = await aRun(desk, 30, scene);
   await sendParts(desk, ids.complete);
   await desk.services.runs.complete(desk.people.technicalDirector, ids.complete, someTraces(30));
@@ -68,7 +77,12 @@ const CASES: Case[] = [
     status: 400,
   },
   { route: 'GET /api/models/:modelId', least: 'artist', path: () => `/api/models/${ids.model}`, status: 200 },
-  { route: 'GET /api/models/:modelId/patches', least: 'artist', path: () => `/api/models/${ids.model}/patches`, status: 200 },
+  {
+    route: 'GET /api/models/:modelId/patches',
+    least: 'artist',
+    path: () => `/api/models/${ids.model}/patches`,
+    status: 200,
+  },
   {
     route: 'PATCH /api/models/:modelId',
     least: 'technicalDirector',
@@ -84,7 +98,12 @@ const CASES: Case[] = [
     status: 201,
   },
   { route: 'GET /api/scenes/:sceneId', least: 'artist', path: () => `/api/scenes/${ids.scene}`, status: 200 },
-  { route: 'GET /api/scenes/:sceneId/revisions', least: 'artist', path: () => `/api/scenes/${ids.scene}/revisions`, status: 200 },
+  {
+    route: 'GET /api/scenes/:sceneId/revisions',
+    least: 'artist',
+    path: () => `/api/scenes/${ids.scene}/revisions`,
+    status: 200,
+  },
   { route: 'GET /api/scenes/:sceneId/runs', least: 'artist', path: () => `/api/scenes/${ids.scene}/runs`, status: 200 },
   // Based on no revision, so that a permitted save is refused with 409 every time.
   {
@@ -94,7 +113,12 @@ const CASES: Case[] = [
     body: () => ({ basedOn: 0, document: aDocument(ids.model) }),
     status: 409,
   },
-  { route: 'GET /api/revisions/:revisionId', least: 'artist', path: () => `/api/revisions/${ids.revision}`, status: 200 },
+  {
+    route: 'GET /api/revisions/:revisionId',
+    least: 'artist',
+    path: () => `/api/revisions/${ids.revision}`,
+    status: 200,
+  },
   {
     route: 'POST /api/scenes/:sceneId/runs',
     least: 'technicalDirector',
@@ -106,9 +130,26 @@ const CASES: Case[] = [
   ofComplete('traces'),
   ofComplete('recipe'),
   ofComplete('chunks/0', 'chunks/:index'),
-  { route: 'GET /api/runs/:runId/checkpoint', least: 'artist', path: () => `/api/runs/${ids.run}/checkpoint`, status: 200 },
-  { route: 'PUT /api/runs/:runId/recipe', least: 'technicalDirector', path: () => `/api/runs/${ids.run}/recipe`, bytes, status: 204 },
-  { route: 'PUT /api/runs/:runId/chunks/:index', least: 'technicalDirector', path: () => `/api/runs/${ids.run}/chunks/0`, bytes, status: 204 },
+  {
+    route: 'GET /api/runs/:runId/checkpoint',
+    least: 'artist',
+    path: () => `/api/runs/${ids.run}/checkpoint`,
+    status: 200,
+  },
+  {
+    route: 'PUT /api/runs/:runId/recipe',
+    least: 'technicalDirector',
+    path: () => `/api/runs/${ids.run}/recipe`,
+    bytes,
+    status: 204,
+  },
+  {
+    route: 'PUT /api/runs/:runId/chunks/:index',
+    least: 'technicalDirector',
+    path: () => `/api/runs/${ids.run}/chunks/0`,
+    bytes,
+    status: 204,
+  },
   {
     route: 'PUT /api/runs/:runId/checkpoint',
     least: 'technicalDirector',
@@ -123,7 +164,12 @@ const CASES: Case[] = [
     body: () => ({ traces: someTraces(30) }),
     status: 200,
   },
-  { route: 'DELETE /api/runs/:runId', least: 'technicalDirector', path: () => `/api/runs/${ids.complete}`, status: 409 },
+  {
+    route: 'DELETE /api/runs/:runId',
+    least: 'technicalDirector',
+    path: () => `/api/runs/${ids.complete}`,
+    status: 409,
+  },
   { route: 'GET /api/audit', least: 'administrator', path: () => '/api/audit', status: 200 },
 ];
 
@@ -170,14 +216,20 @@ test('GET /api/productions is refused to nobody, and shows each only their own',
   };
   expect(await names('artist')).toEqual([['The Tide Fair', 'artist']]);
   expect(await names('outsider')).toEqual([['Another Show', 'lead']]);
-  expect(await names('administrator')).toEqual([['Another Show', null], ['The Tide Fair', null]]);
+  expect(await names('administrator')).toEqual([
+    ['Another Show', null],
+    ['The Tide Fair', null],
+  ]);
 });
 
 test('what cannot be an id, or is the id of nothing, is not found', async () => {
   const nothing = '00000000-0000-4000-8000-000000000000';
   for (const id of ['nonsense', nothing, "1'--"]) {
     for (const path of [`models/${id}`, `scenes/${id}`, `revisions/${id}`, `runs/${id}`, `productions/${id}/models`]) {
-      const response = await desk.as('administrator').get(`/api/${encodeURI(path)}`).expect(404);
+      const response = await desk
+        .as('administrator')
+        .get(`/api/${encodeURI(path)}`)
+        .expect(404);
       expect(response.body.type).toBe('/problems/not-found');
     }
   }

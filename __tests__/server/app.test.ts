@@ -133,7 +133,9 @@ describe('failures', () => {
 
   test('a failed query leaves its parameters out of the log', async () => {
     const { lines, sink } = collector();
-    const failure = await desk.rows('SELECT $1::text FROM nowhere', ['sent by somebody']).catch((error: unknown) => error);
+    const failure = await desk
+      .rows('SELECT $1::text FROM nowhere', ['sent by somebody'])
+      .catch((error: unknown) => error);
     createLogger('info', sink).error({ err: failure }, 'request failed');
     expect(lines.join('')).toContain('nowhere');
     expect(lines.join('')).toContain('42P01');
@@ -152,14 +154,23 @@ describe('failures', () => {
       { method: 'POST', route: '/api/session', status: 200 },
       { method: 'GET', route: '/api/productions/:productionId/models', status: 200, person: desk.people.artist.id },
     ]);
-    for (const secret of [PASSWORD, email, signedIn.body.accessToken, signedIn.get('Set-Cookie')![0]!.split(/[=;]/)[1]!]) {
+    for (const secret of [
+      PASSWORD,
+      email,
+      signedIn.body.accessToken,
+      signedIn.get('Set-Cookie')![0]!.split(/[=;]/)[1]!,
+    ]) {
       expect(lines.join('')).not.toContain(secret);
     }
   });
 
   test('a body above the limit is refused with a problem', async () => {
     const path = `/api/productions/${desk.fair}/scenes`;
-    const response = await desk.as('technicalDirector').post(path).send({ name: 'x'.repeat(2 * 1024 * 1024) }).expect(413);
+    const response = await desk
+      .as('technicalDirector')
+      .post(path)
+      .send({ name: 'x'.repeat(2 * 1024 * 1024) })
+      .expect(413);
     expect(response.body.type).toBe('/problems/too-large');
   });
 });

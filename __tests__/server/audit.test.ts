@@ -37,7 +37,11 @@ test('pages hold every event once', async () => {
 });
 
 test('holds no password, and the address somebody tried only when it is a known one', async () => {
-  await desk.as(null).post('/api/session').send({ email: 'my-password-typed-here@x.example', password: PASSWORD }).expect(401);
+  await desk
+    .as(null)
+    .post('/api/session')
+    .send({ email: 'my-password-typed-here@x.example', password: PASSWORD })
+    .expect(401);
   const { items } = await page({ limit: 100 });
   expect(items[0]).toMatchObject({ kind: 'sign-in-failed', person: null, production: null });
   const text = JSON.stringify(await desk.rows('SELECT * FROM audit_event'));

@@ -9,15 +9,23 @@ test('what is left out has its usual value, and nothing can be changed later', (
 });
 
 test('every fault is on its own line, and no value is repeated', () => {
-  const read = () => readConfig({ DATABASE_URL: 'mysql://secret', LOLLOP_TOKEN_SECRET: 'short', PORT: 'seven', LOLLOP_LOG_LEVEL: 'loud' });
+  const read = () =>
+    readConfig({
+      DATABASE_URL: 'mysql://secret',
+      LOLLOP_TOKEN_SECRET: 'short',
+      PORT: 'seven',
+      LOLLOP_LOG_LEVEL: 'loud',
+    });
   expect(read).toThrow(ConfigFault);
-  const message = String((() => {
-    try {
-      read();
-    } catch (error) {
-      return (error as Error).message;
-    }
-  })());
+  const message = String(
+    (() => {
+      try {
+        read();
+      } catch (error) {
+        return (error as Error).message;
+      }
+    })(),
+  );
   expect(message.split('\n').map((line) => line.trim().split(' ')[0])).toEqual([
     'Lollop',
     'DATABASE_URL',

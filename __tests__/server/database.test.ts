@@ -20,7 +20,9 @@ test('the migrations can be taken back one by one, and run again', async () => {
   const data = await createDataSource(scratch.url).initialize();
   await data.runMigrations({ transaction: 'each' });
   for (const _ of data.migrations) await data.undoLastMigration({ transaction: 'each' });
-  const left = await data.query("SELECT table_name FROM information_schema.tables WHERE table_schema = 'public' AND table_name <> 'migrations'");
+  const left = await data.query(
+    "SELECT table_name FROM information_schema.tables WHERE table_schema = 'public' AND table_name <> 'migrations'",
+  );
   expect(left).toEqual([]);
   await data.runMigrations({ transaction: 'each' });
   await data.destroy();
@@ -32,9 +34,21 @@ describe('the database itself refuses', () => {
     expect(desk.rows(sql, values)).rejects.toMatchObject({ driverError: { constraint } });
 
   test('an address in capitals, twice, or a role nobody knows', async () => {
-    await refused("INSERT INTO person (name, email, password_hash) VALUES ('A', 'A@x.example', 'h')", [], 'person_email_lower');
-    await refused("INSERT INTO person (name, email, password_hash) VALUES ('A', $1, 'h')", [desk.people.artist.email], 'person_email_once');
-    await refused("UPDATE membership SET role = 'owner' WHERE person_id = $1", [desk.people.artist.id], 'membership_role_known');
+    await refused(
+      "INSERT INTO person (name, email, password_hash) VALUES ('A', 'A@x.example', 'h')",
+      [],
+      'person_email_lower',
+    );
+    await refused(
+      "INSERT INTO person (name, email, password_hash) VALUES ('A', $1, 'h')",
+      [desk.people.artist.email],
+      'person_email_once',
+    );
+    await refused(
+      "UPDATE membership SET role = 'owner' WHERE person_id = $1",
+      [desk.people.artist.id],
+      'membership_role_known',
+    );
   });
 
   test('bytes that do not fit their hash or size, in models and chunks', async () => {
@@ -61,14 +75,24 @@ describe('the database itself refuses', () => {
     );
     const run = await aRun(desk);
     const other = await aRun(desk);
-    await refused('UPDATE run SET number = (SELECT number FROM run WHERE id = $2) WHERE id = $1', [run, other], 'run_number_once');
-    await refused("UPDATE run SET status = 'complete', completed_at = now() WHERE id = $1", [run], 'run_complete_whole');
+    await refused(
+      'UPDATE run SET number = (SELECT number FROM run WHERE id = $2) WHERE id = $1',
+      [run, other],
+      'run_number_once',
+    );
+    await refused(
+      "UPDATE run SET status = 'complete', completed_at = now() WHERE id = $1",
+      [run],
+      'run_complete_whole',
+    );
   });
 
   test('to lose a model that scenes stand on, or a person who made something', async () => {
     const { modelId } = await aScene(desk);
     await refused('DELETE FROM model WHERE id = $1', [modelId], 'scene_model_in_production');
-    await expect(desk.rows('DELETE FROM person WHERE id = $1', [desk.people.technicalDirector.id])).rejects.toThrow('violates foreign key');
+    await expect(desk.rows('DELETE FROM person WHERE id = $1', [desk.people.technicalDirector.id])).rejects.toThrow(
+      'violates foreign key',
+    );
   });
 
   test('a scene with a model of another production, and a run of a revision of another scene', async () => {
@@ -78,7 +102,11 @@ describe('the database itself refuses', () => {
     const other = await aScene(desk);
     const run = await aRun(desk);
     await refused('UPDATE run SET revision_id = $2 WHERE id = $1', [run, other.revisionId], 'run_revision_of_scene');
-    await refused('UPDATE run SET production_id = $2, number = 999 WHERE id = $1', [run, desk.elsewhere], 'run_scene_in_production');
+    await refused(
+      'UPDATE run SET production_id = $2, number = 999 WHERE id = $1',
+      [run, desk.elsewhere],
+      'run_scene_in_production',
+    );
   });
 
   test('a unit that is no length', async () => {

@@ -59,7 +59,11 @@ test('starts on an empty database, is ready, and on SIGTERM ends with 0 though a
 
 test.each([
   ['a missing secret', { LOLLOP_TOKEN_SECRET: '' }, 'LOLLOP_TOKEN_SECRET must have at least 32 characters'],
-  ['a database that does not answer', { DATABASE_URL: 'postgres://u:p@127.0.0.1:9/d' }, 'No database answers at DATABASE_URL'],
+  [
+    'a database that does not answer',
+    { DATABASE_URL: 'postgres://u:p@127.0.0.1:9/d' },
+    'No database answers at DATABASE_URL',
+  ],
 ])('%s is one clear sentence and exit code 1', async (_what, change, sentence) => {
   const server = start(environment(change));
   expect(await server.exit).toBe(1);

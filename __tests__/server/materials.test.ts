@@ -30,12 +30,15 @@ test('the shipped presets are there, sorted by name, each with source, status an
 });
 
 // A.N. Gent, Rubber Chem. Technol. 31 (1958) 896: E[MPa] = 0.0981 (56 + 7.62336 S) / (0.137505 (254 - 2.54 S)).
-test.each([10, 20, 30, 40, 50, 60])('silicone of Shore A%i has the modulus of the formula of Gent (1958)', async (hardness) => {
-  const item = (await list()).find(({ name }) => name === `Silicone Shore A${hardness}`);
-  const megapascals = (0.0981 * (56 + 7.62336 * hardness)) / (0.137505 * (254 - 2.54 * hardness));
-  // The preset is rounded to 100 Pa.
-  expect(Math.abs(item!.youngsModulus - megapascals * 1e6)).toBeLessThanOrEqual(60);
-});
+test.each([10, 20, 30, 40, 50, 60])(
+  'silicone of Shore A%i has the modulus of the formula of Gent (1958)',
+  async (hardness) => {
+    const item = (await list()).find(({ name }) => name === `Silicone Shore A${hardness}`);
+    const megapascals = (0.0981 * (56 + 7.62336 * hardness)) / (0.137505 * (254 - 2.54 * hardness));
+    // The preset is rounded to 100 Pa.
+    expect(Math.abs(item!.youngsModulus - megapascals * 1e6)).toBeLessThanOrEqual(60);
+  },
+);
 
 test('adding the presets again changes nothing', async () => {
   const before = await desk.rows('SELECT * FROM material ORDER BY id');

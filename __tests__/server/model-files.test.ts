@@ -33,9 +33,17 @@ test('Bézier-patch text: patches, bounds and edges of a box', async () => {
     unit: 1,
     unitConfirmed: false,
     bounds: { min: [0, 0, 0], max: [30, 20, 10] },
-    report: { declared: 6, imported: 6, skipped: [], declaredUnit: null, edges: { joined: 24, gapped: 0, open: 0, degenerate: 0 } },
+    report: {
+      declared: 6,
+      imported: 6,
+      skipped: [],
+      declaredUnit: null,
+      edges: { joined: 24, gapped: 0, open: 0, degenerate: 0 },
+    },
   });
-  const patches = modelPatchesSchema.parse((await desk.as('artist').get(`/api/models/${model.id}/patches`).expect(200)).body).patches;
+  const patches = modelPatchesSchema.parse(
+    (await desk.as('artist').get(`/api/models/${model.id}/patches`).expect(200)).body,
+  ).patches;
   expect(patches).toHaveLength(6);
   for (const [i, patch] of patches.entries()) {
     expect(patch.points).toEqual(Array.from(box[i]!.points));
@@ -45,10 +53,14 @@ test('Bézier-patch text: patches, bounds and edges of a box', async () => {
 
 test('STEP: the unit of the file is taken, and weights come through', async () => {
   const sphere = shapePatches({ kind: 'sphere', centre: [0, 0, 0], radius: 5 });
-  const response = await upload(Buffer.from(writeStep(sphere, 'ball', 0.001, '2026-01-01T00:00:00')), 'ball.stp').expect(201);
+  const response = await upload(
+    Buffer.from(writeStep(sphere, 'ball', 0.001, '2026-01-01T00:00:00')),
+    'ball.stp',
+  ).expect(201);
   const model = modelSchema.parse(response.body);
   expect(model).toMatchObject({ format: 'step', unit: 0.001, patchCount: sphere.length });
-  for (const value of [...model.bounds.max, ...model.bounds.min.map((x) => -x)]) expect(Math.abs(value - 5)).toBeLessThan(5e-3);
+  for (const value of [...model.bounds.max, ...model.bounds.min.map((x) => -x)])
+    expect(Math.abs(value - 5)).toBeLessThan(5e-3);
   const { patches } = modelPatchesSchema.parse((await desk.as('artist').get(`/api/models/${model.id}/patches`)).body);
   expect(patches[0]!.weights).not.toBeNull();
 });
@@ -66,7 +78,11 @@ describe('bad files are refused with a sentence, and nothing is kept', () => {
     ['random', noise, 'a.stp'],
     ['of another kind', Buffer.from('solid x\nendsolid x\n'), 'a.stl'],
     ['truncated text', boxText.subarray(0, boxText.length / 2), 'a.bpt'],
-    ['a STEP file without surfaces', Buffer.from('ISO-10303-21;\nHEADER;\nENDSEC;\nDATA;\nENDSEC;\nEND-ISO-10303-21;\n'), 'a.stp'],
+    [
+      'a STEP file without surfaces',
+      Buffer.from('ISO-10303-21;\nHEADER;\nENDSEC;\nDATA;\nENDSEC;\nEND-ISO-10303-21;\n'),
+      'a.stp',
+    ],
     ['a STEP file cut before its first surface', Buffer.from(writeStep(box, 'box', 1, 's')).subarray(0, 400), 'a.stp'],
     ['not a number', nan, 'a.bpt'],
   ])('%s', async (_what, bytes, fileName) => {

@@ -42,7 +42,9 @@ describe('POST /api/productions/:productionId/models', () => {
     const events = await desk.rows("SELECT details FROM audit_event WHERE kind = 'model-uploaded' AND person_id = $1", [
       desk.people.technicalDirector.id,
     ]);
-    expect(events).toEqual([{ details: { modelId: model.id, name: 'Pudding', fileName: 'steamed püdding.bpt', bytes: FILE.length } }]);
+    expect(events).toEqual([
+      { details: { modelId: model.id, name: 'Pudding', fileName: 'steamed püdding.bpt', bytes: FILE.length } },
+    ]);
   });
 
   test('without a name the file gives it; folders and characters that cannot be kept are left out', async () => {
@@ -74,8 +76,13 @@ describe('POST /api/productions/:productionId/models', () => {
 
   test('413 above 64 MB, and nothing is kept', async () => {
     const before = await stored();
-    const response = await upload().attach('file', Buffer.alloc(MAX_UPLOAD_BYTES + 1), 'huge.stp').expect(413);
-    expect(response.body).toMatchObject({ type: '/problems/too-large', detail: 'The file is larger than 64 MB. Nothing was kept.' });
+    const response = await upload()
+      .attach('file', Buffer.alloc(MAX_UPLOAD_BYTES + 1), 'huge.stp')
+      .expect(413);
+    expect(response.body).toMatchObject({
+      type: '/problems/too-large',
+      detail: 'The file is larger than 64 MB. Nothing was kept.',
+    });
     expect(await stored()).toEqual(before);
   });
 
@@ -83,7 +90,9 @@ describe('POST /api/productions/:productionId/models', () => {
     const unlucky = await openDesk({}, new ModelReader(LIMITS, child('crashing')));
     const response = await upload(unlucky).attach('file', FILE, 'a.bpt').expect(422);
     expect(response.body.type).toBe('/problems/unreadable-model');
-    expect(await unlucky.rows("SELECT 1 FROM model UNION ALL SELECT 1 FROM audit_event WHERE kind = 'model-uploaded'")).toEqual([]);
+    expect(
+      await unlucky.rows("SELECT 1 FROM model UNION ALL SELECT 1 FROM audit_event WHERE kind = 'model-uploaded'"),
+    ).toEqual([]);
     await unlucky.as('artist').get(`/api/productions/${unlucky.fair}/models`).expect(200);
     await unlucky.close();
   });
@@ -120,11 +129,22 @@ describe('PATCH /api/models/:modelId', () => {
 
   test('a person confirms the unit; a changed unit has to be confirmed again', async () => {
     const id = await aModel(desk);
-    expect((await change(id, { unitConfirmed: true }).expect(200)).body).toMatchObject({ unit: 1, unitConfirmed: true });
-    expect((await change(id, { name: 'Renamed' }).expect(200)).body).toMatchObject({ name: 'Renamed', unitConfirmed: true });
+    expect((await change(id, { unitConfirmed: true }).expect(200)).body).toMatchObject({
+      unit: 1,
+      unitConfirmed: true,
+    });
+    expect((await change(id, { name: 'Renamed' }).expect(200)).body).toMatchObject({
+      name: 'Renamed',
+      unitConfirmed: true,
+    });
     expect((await change(id, { unit: 0.01 }).expect(200)).body).toMatchObject({ unit: 0.01, unitConfirmed: false });
-    expect((await change(id, { unit: 0.001, unitConfirmed: true }).expect(200)).body).toMatchObject({ unit: 0.001, unitConfirmed: true });
-    const events = await desk.rows("SELECT details FROM audit_event WHERE kind = 'model-changed' ORDER BY created_at DESC LIMIT 1");
+    expect((await change(id, { unit: 0.001, unitConfirmed: true }).expect(200)).body).toMatchObject({
+      unit: 0.001,
+      unitConfirmed: true,
+    });
+    const events = await desk.rows(
+      "SELECT details FROM audit_event WHERE kind = 'model-changed' ORDER BY created_at DESC LIMIT 1",
+    );
     expect(events[0]!.details).toMatchObject({ modelId: id, unit: 0.001, unitBefore: 0.01 });
   });
 
@@ -141,9 +161,17 @@ describe('PATCH /api/models/:modelId', () => {
 describe('GET', () => {
   test('/api/models/:modelId/patches come zipped or plain, as the asker can take them', async () => {
     const { body } = await upload().attach('file', FILE, 'a.bpt').expect(201);
-    const zipped = await desk.as('artist').get(`/api/models/${body.id}/patches`).set('Accept-Encoding', 'gzip').expect(200);
+    const zipped = await desk
+      .as('artist')
+      .get(`/api/models/${body.id}/patches`)
+      .set('Accept-Encoding', 'gzip')
+      .expect(200);
     expect(zipped.get('Content-Encoding')).toBe('gzip');
-    const plain = await desk.as('artist').get(`/api/models/${body.id}/patches`).set('Accept-Encoding', 'identity').expect(200);
+    const plain = await desk
+      .as('artist')
+      .get(`/api/models/${body.id}/patches`)
+      .set('Accept-Encoding', 'identity')
+      .expect(200);
     expect(plain.get('Content-Encoding')).toBeUndefined();
     expect(modelPatchesSchema.parse(zipped.body)).toEqual(modelPatchesSchema.parse(plain.body));
   });
@@ -151,7 +179,9 @@ describe('GET', () => {
   test('the list of a production holds its own models only, newest first', async () => {
     const foreign = await aModel(desk, desk.elsewhere, 'outsider');
     const own = await aModel(desk);
-    const list = modelListSchema.parse((await desk.as('artist').get(`/api/productions/${desk.fair}/models`).expect(200)).body);
+    const list = modelListSchema.parse(
+      (await desk.as('artist').get(`/api/productions/${desk.fair}/models`).expect(200)).body,
+    );
     expect(list.items[0]!.id).toBe(own);
     expect(list.items.map(({ id }) => id)).not.toContain(foreign);
     expect(new Set(list.items.map(({ productionId }) => productionId))).toEqual(new Set([desk.fair]));

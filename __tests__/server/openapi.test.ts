@@ -24,7 +24,9 @@ test('every reference in it leads somewhere', () => {
   const references = [...JSON.stringify(document).matchAll(/"\$ref":"#\/([^"]+)"/g)].map(([, path]) => path!);
   expect(references.length).toBeGreaterThan(50);
   for (const path of new Set(references)) {
-    const target = path.split('/').reduce<unknown>((at, key) => (at as Record<string, unknown> | undefined)?.[key], document);
+    const target = path
+      .split('/')
+      .reduce<unknown>((at, key) => (at as Record<string, unknown> | undefined)?.[key], document);
     expect([path, typeof target]).toEqual([path, 'object']);
   }
 });

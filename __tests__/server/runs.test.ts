@@ -17,8 +17,10 @@ const td = () => desk.as('technicalDirector');
 const start = (body: object, sceneId = scene.sceneId) => td().post(`/api/scenes/${sceneId}/runs`).send(body);
 const put = (path: string, bytes: Buffer, hash = sha256(bytes)) =>
   td().put(`/api/runs/${path}`).set('X-Content-SHA256', hash).type('application/octet-stream').send(bytes);
-const complete = (runId: string, traces: object = someTraces(FRAMES)) => td().post(`/api/runs/${runId}/complete`).send({ traces });
-const run = async (runId: string) => runSchema.parse((await desk.as('artist').get(`/api/runs/${runId}`).expect(200)).body);
+const complete = (runId: string, traces: object = someTraces(FRAMES)) =>
+  td().post(`/api/runs/${runId}/complete`).send({ traces });
+const run = async (runId: string) =>
+  runSchema.parse((await desk.as('artist').get(`/api/runs/${runId}`).expect(200)).body);
 
 describe('POST /api/scenes/:sceneId/runs', () => {
   test('starts a run with provenance that comes back as it was', async () => {
@@ -57,7 +59,11 @@ describe('POST /api/scenes/:sceneId/runs', () => {
     const numbers = answers.map(({ body }) => body.number as number).sort((a, b) => a - b);
     expect(numbers).toEqual(Array.from({ length: 8 }, (_, i) => before + 1 + i));
     const list = await desk.as('artist').get(`/api/productions/${desk.fair}/runs`).query({ limit: 3 }).expect(200);
-    expect(runListSchema.parse(list.body).items.map(({ number }) => number)).toEqual([before + 8, before + 7, before + 6]);
+    expect(runListSchema.parse(list.body).items.map(({ number }) => number)).toEqual([
+      before + 8,
+      before + 7,
+      before + 6,
+    ]);
   });
 });
 
@@ -67,7 +73,9 @@ describe('chunks', () => {
     await put(`${id}/chunks/0`, someBytes(0)).expect(204);
     await put(`${id}/chunks/0`, someBytes(0)).expect(204);
     await put(`${id}/chunks/1`, someBytes(1)).expect(204);
-    expect((await run(id)).chunks).toEqual([0, 1].map((index) => ({ index, bytes: 64, sha256: sha256(someBytes(index)) })));
+    expect((await run(id)).chunks).toEqual(
+      [0, 1].map((index) => ({ index, bytes: 64, sha256: sha256(someBytes(index)) })),
+    );
 
     const back = await desk.as('artist').get(`/api/runs/${id}/chunks/1`).buffer(true).expect(200);
     expect(back.body).toEqual(someBytes(1));
@@ -100,7 +108,11 @@ describe('chunks', () => {
     const path = `/api/runs/${id}/chunks/0`;
     await td().put(path).type('application/octet-stream').send(someBytes(0)).expect(400);
     await put(`${id}/chunks/0`, Buffer.alloc(0)).expect(400);
-    await td().put(path).set('X-Content-SHA256', sha256(someBytes(0))).send({ bytes: 1 }).expect(400);
+    await td()
+      .put(path)
+      .set('X-Content-SHA256', sha256(someBytes(0)))
+      .send({ bytes: 1 })
+      .expect(400);
     await put(`${id}/chunks/0`, someBytes(0), 'nonsense').expect(400);
     const beyond = await put(`${id}/chunks/2`, someBytes(2)).expect(400);
     expect(beyond.body.detail).toBe('The run has 2 chunks.');
@@ -168,7 +180,9 @@ describe('POST /api/runs/:runId/complete', () => {
     expect(done.completedAt).not.toBeNull();
     const traces = await desk.as('artist').get(`/api/runs/${id}/traces`).expect(200);
     expect(runTracesSchema.parse(traces.body)).toEqual(JSON.parse(JSON.stringify(someTraces(FRAMES))));
-    const events = await desk.rows("SELECT kind FROM audit_event WHERE details->>'runId' = $1 ORDER BY created_at", [id]);
+    const events = await desk.rows("SELECT kind FROM audit_event WHERE details->>'runId' = $1 ORDER BY created_at", [
+      id,
+    ]);
     expect(events.map(({ kind }) => kind)).toEqual(['run-started', 'run-completed']);
   });
 
@@ -177,7 +191,9 @@ describe('POST /api/runs/:runId/complete', () => {
     await sendParts(desk, id);
     const traces = { ...someTraces(FRAMES), energy: [1, 2] };
     const response = await complete(id, traces).expect(400);
-    expect(response.body.errors).toEqual([{ pointer: '/traces/energy', detail: 'Give 31 values, frame 0 included; there are 2.' }]);
+    expect(response.body.errors).toEqual([
+      { pointer: '/traces/energy', detail: 'Give 31 values, frame 0 included; there are 2.' },
+    ]);
     expect((await run(id)).status).toBe('baking');
   });
 
@@ -193,7 +209,9 @@ describe('POST /api/runs/:runId/complete', () => {
     await put(`${id}/checkpoint?frame=0`, someBytes(7)).expect(409);
     await td().delete(`/api/runs/${id}`).expect(409);
     await expect(desk.rows('UPDATE run SET frames = 1 WHERE id = $1', [id])).rejects.toThrow('written once');
-    await expect(desk.rows("UPDATE run_chunk SET content = '\\x00' WHERE run_id = $1", [id])).rejects.toThrow('written once');
+    await expect(desk.rows("UPDATE run_chunk SET content = '\\x00' WHERE run_id = $1", [id])).rejects.toThrow(
+      'written once',
+    );
   });
 });
 
@@ -204,7 +222,10 @@ describe('at the same moment', () => {
     await desk.openConnections();
     const answers = await Promise.all([complete(id), complete(id), complete(id)]);
     expect(answers.map(({ status }) => status)).toEqual([200, 200, 200]);
-    const events = await desk.rows("SELECT 1 FROM audit_event WHERE kind = 'run-completed' AND details->>'runId' = $1", [id]);
+    const events = await desk.rows(
+      "SELECT 1 FROM audit_event WHERE kind = 'run-completed' AND details->>'runId' = $1",
+      [id],
+    );
     expect(events).toHaveLength(1);
   });
 

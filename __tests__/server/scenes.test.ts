@@ -12,18 +12,29 @@ beforeAll(async () => {
 afterAll(() => desk?.close());
 
 const create = (body: object) => desk.as('technicalDirector').post(`/api/productions/${desk.fair}/scenes`).send(body);
-const save = (sceneId: string, body: object) => desk.as('technicalDirector').post(`/api/scenes/${sceneId}/revisions`).send(body);
+const save = (sceneId: string, body: object) =>
+  desk.as('technicalDirector').post(`/api/scenes/${sceneId}/revisions`).send(body);
 
 describe('POST /api/productions/:productionId/scenes', () => {
   test('keeps the scene with its revision 1, and the document comes back as it was sent', async () => {
     const document = aDocument(modelId, { gauges: [{ id: 'g1', name: 'Tip', point: [0.1, -0, 1e-9] }] });
     const response = await create({ name: '  Wobble ', document }).expect(201);
     const scene = sceneSchema.parse(response.body);
-    expect(scene).toMatchObject({ name: 'Wobble', model: { id: modelId, name: 'Pudding' }, latestRevision: { number: 1 } });
+    expect(scene).toMatchObject({
+      name: 'Wobble',
+      model: { id: modelId, name: 'Pudding' },
+      latestRevision: { number: 1 },
+    });
     expect(response.get('Location')).toBe(`/api/scenes/${scene.id}`);
     const revision = await desk.as('artist').get(`/api/revisions/${scene.latestRevision.id}`).expect(200);
-    expect(revisionSchema.parse(revision.body).document).toEqual({ ...document, gauges: [{ id: 'g1', name: 'Tip', point: [0.1, 0, 1e-9] }] });
-    const [stored] = await desk.rows('SELECT production_id, model_id, latest_number, created_by_id FROM scene WHERE id = $1', [scene.id]);
+    expect(revisionSchema.parse(revision.body).document).toEqual({
+      ...document,
+      gauges: [{ id: 'g1', name: 'Tip', point: [0.1, 0, 1e-9] }],
+    });
+    const [stored] = await desk.rows(
+      'SELECT production_id, model_id, latest_number, created_by_id FROM scene WHERE id = $1',
+      [scene.id],
+    );
     expect(stored).toEqual({
       production_id: desk.fair,
       model_id: modelId,
@@ -47,7 +58,12 @@ describe('POST /api/productions/:productionId/scenes', () => {
     ]);
     expect(await refused(aDocument(modelId, { parts: { count: 0, order: 'quadratic' } }))).toHaveLength(1);
     expect(await refused({ ...aDocument(modelId), surprise: 1 })).toHaveLength(1);
-    const gravity = { id: 'l', name: 'Gravity', kind: 'gravity' as const, acceleration: [0, 0, -9.80665] as [number, number, number] };
+    const gravity = {
+      id: 'l',
+      name: 'Gravity',
+      kind: 'gravity' as const,
+      acceleration: [0, 0, -9.80665] as [number, number, number],
+    };
     expect(await refused(aDocument(modelId, { loads: [gravity], time: { kind: 'static', loadSteps: 1 } }))).toEqual([
       expect.objectContaining({ pointer: '/document/supports' }),
     ]);
@@ -69,9 +85,14 @@ describe('POST /api/productions/:productionId/scenes', () => {
     const nothing = '00000000-0000-4000-8000-000000000000';
     for (const id of [foreign, nothing]) {
       const response = await create({ name: 'Bad', document: aDocument(id) }).expect(400);
-      expect(response.body.errors).toEqual([{ pointer: '/document/geometry/modelId', detail: 'Choose a model of this production.' }]);
+      expect(response.body.errors).toEqual([
+        { pointer: '/document/geometry/modelId', detail: 'Choose a model of this production.' },
+      ]);
     }
-    const shapes = { kind: 'shapes' as const, shapes: [{ kind: 'sphere' as const, centre: [0, 0, 0] as [number, number, number], radius: 1 }] };
+    const shapes = {
+      kind: 'shapes' as const,
+      shapes: [{ kind: 'sphere' as const, centre: [0, 0, 0] as [number, number, number], radius: 1 }],
+    };
     const response = await create({ name: 'Bad', document: aDocument(modelId, { geometry: shapes }) }).expect(400);
     expect(response.body.errors[0].pointer).toBe('/document/geometry');
   });
@@ -101,14 +122,21 @@ describe('POST /api/productions/:productionId/scenes', () => {
 describe('POST /api/scenes/:sceneId/revisions', () => {
   test('adds the next number, keeps the ones before, and is on the audit list', async () => {
     const { sceneId, modelId: own } = await aScene(desk);
-    const response = await save(sceneId, { basedOn: 1, remark: 'softer', document: aDocument(own, { bondDistance: 0.01 }) }).expect(201);
+    const response = await save(sceneId, {
+      basedOn: 1,
+      remark: 'softer',
+      document: aDocument(own, { bondDistance: 0.01 }),
+    }).expect(201);
     const revision = revisionSchema.parse(response.body);
     expect(revision).toMatchObject({ sceneId, number: 2, remark: 'softer', createdBy: { name: 'technicalDirector' } });
     const scene = await desk.as('artist').get(`/api/scenes/${sceneId}`).expect(200);
     expect(scene.body.latestRevision).toMatchObject({ id: revision.id, number: 2 });
     const list = await desk.as('artist').get(`/api/scenes/${sceneId}/revisions`).expect(200);
     expect(revisionListSchema.parse(list.body).items.map(({ number }) => number)).toEqual([2, 1]);
-    const events = await desk.rows("SELECT details FROM audit_event WHERE kind = 'revision-saved' AND details->>'sceneId' = $1", [sceneId]);
+    const events = await desk.rows(
+      "SELECT details FROM audit_event WHERE kind = 'revision-saved' AND details->>'sceneId' = $1",
+      [sceneId],
+    );
     expect(events).toEqual([{ details: { sceneId, number: 2 } }]);
   });
 
@@ -120,10 +148,9 @@ describe('POST /api/scenes/:sceneId/revisions', () => {
       expect(response.body.type).toBe('/problems/conflict');
       expect(response.body.detail).toContain('revision is 2');
     }
-    expect(await desk.rows('SELECT number FROM scene_revision WHERE scene_id = $1 ORDER BY number', [sceneId])).toEqual([
-      { number: 1 },
-      { number: 2 },
-    ]);
+    expect(await desk.rows('SELECT number FROM scene_revision WHERE scene_id = $1 ORDER BY number', [sceneId])).toEqual(
+      [{ number: 1 }, { number: 2 }],
+    );
   });
 
   test('of saves at the same moment one wins, the others hear of it', async () => {
@@ -146,7 +173,9 @@ describe('POST /api/scenes/:sceneId/revisions', () => {
 
   test('a stored revision cannot be changed or removed, not even in the database', async () => {
     const { revisionId } = await aScene(desk);
-    await expect(desk.rows("UPDATE scene_revision SET remark = 'x' WHERE id = $1", [revisionId])).rejects.toThrow('written once');
+    await expect(desk.rows("UPDATE scene_revision SET remark = 'x' WHERE id = $1", [revisionId])).rejects.toThrow(
+      'written once',
+    );
     await expect(desk.rows('DELETE FROM scene_revision WHERE id = $1', [revisionId])).rejects.toThrow('written once');
   });
 });
@@ -163,21 +192,34 @@ describe('GET /api/productions/:productionId/scenes', () => {
     const seen: string[] = [];
     let cursor: string | null = null;
     do {
-      const response = await desk.as('artist').get(`/api/productions/${desk.fair}/scenes`).query({ limit: 2, ...(cursor ? { cursor } : {}) });
+      const response = await desk
+        .as('artist')
+        .get(`/api/productions/${desk.fair}/scenes`)
+        .query({ limit: 2, ...(cursor ? { cursor } : {}) });
       const page = sceneListSchema.parse(response.body);
       expect(page.items.length).toBeLessThanOrEqual(2);
       seen.push(...page.items.map(({ id }) => id));
       cursor = page.nextCursor;
     } while (cursor);
-    const stored = await desk.rows<{ id: string }>('SELECT id FROM scene WHERE production_id = $1 ORDER BY created_at DESC, id DESC', [desk.fair]);
+    const stored = await desk.rows<{ id: string }>(
+      'SELECT id FROM scene WHERE production_id = $1 ORDER BY created_at DESC, id DESC',
+      [desk.fair],
+    );
     expect(seen).toEqual(stored.map(({ id }) => id));
   });
 
-  test.each([['limit', '0'], ['limit', '101'], ['limit', 'many'], ['cursor', 'nonsense'], ['cursor', 'WzEsMl0']])(
-    '400 for %s=%s',
-    async (name, value) => {
-      const response = await desk.as('artist').get(`/api/productions/${desk.fair}/scenes`).query({ [name]: value }).expect(400);
-      expect(response.body.errors[0].pointer).toBe(`/query/${name}`);
-    },
-  );
+  test.each([
+    ['limit', '0'],
+    ['limit', '101'],
+    ['limit', 'many'],
+    ['cursor', 'nonsense'],
+    ['cursor', 'WzEsMl0'],
+  ])('400 for %s=%s', async (name, value) => {
+    const response = await desk
+      .as('artist')
+      .get(`/api/productions/${desk.fair}/scenes`)
+      .query({ [name]: value })
+      .expect(400);
+    expect(response.body.errors[0].pointer).toBe(`/query/${name}`);
+  });
 });

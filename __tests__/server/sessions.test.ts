@@ -24,7 +24,8 @@ async function freshCookie(): Promise<string> {
   return cookieOf(await signIn({ email: desk.people.artist.email, password: PASSWORD }).expect(200));
 }
 
-const ageUsedTokens = () => desk.rows("UPDATE refresh_token SET used_at = used_at - interval '11 seconds' WHERE used_at IS NOT NULL");
+const ageUsedTokens = () =>
+  desk.rows("UPDATE refresh_token SET used_at = used_at - interval '11 seconds' WHERE used_at IS NOT NULL");
 
 describe('POST /api/session', () => {
   test('answers with a short token, who it is, and the refresh token in the cookie only', async () => {
@@ -51,7 +52,9 @@ describe('POST /api/session', () => {
       .set('X-Forwarded-Proto', 'https')
       .send({ email: proxied.people.artist.email, password: PASSWORD })
       .expect(200);
-    expect(response.get('Set-Cookie')![0]).toMatch(/^__Host-lollop-refresh=[^;]+; Path=\/; Expires=[^;]+; HttpOnly; Secure; SameSite=Strict$/);
+    expect(response.get('Set-Cookie')![0]).toMatch(
+      /^__Host-lollop-refresh=[^;]+; Path=\/; Expires=[^;]+; HttpOnly; Secure; SameSite=Strict$/,
+    );
     await request(proxied.app)
       .post('/api/session/refresh')
       .set({ ...OWN, 'X-Forwarded-Proto': 'https', Cookie: cookieOf(response) })
@@ -67,7 +70,9 @@ describe('POST /api/session', () => {
     const { instance: _b, ...second } = unknown.body;
     expect(first).toEqual(second);
     expect(wrong.get('Set-Cookie')).toBeUndefined();
-    const events = await desk.rows("SELECT person_id, address FROM audit_event WHERE kind = 'sign-in-failed' ORDER BY created_at");
+    const events = await desk.rows(
+      "SELECT person_id, address FROM audit_event WHERE kind = 'sign-in-failed' ORDER BY created_at",
+    );
     expect(events.map((event) => event.person_id)).toEqual([desk.people.artist.id, null]);
     expect(events[0]!.address).toMatch(/127\.0\.0\.1/);
   });
@@ -101,7 +106,8 @@ describe('POST /api/session', () => {
 });
 
 describe('access tokens', () => {
-  const productions = (token: string) => request(desk.app).get('/api/productions').set('Authorization', `Bearer ${token}`);
+  const productions = (token: string) =>
+    request(desk.app).get('/api/productions').set('Authorization', `Bearer ${token}`);
 
   test('one signed by somebody else, an expired one, an unsigned one and nonsense are refused', async () => {
     const claims = jwt.decode(desk.people.artist.token) as jwt.JwtPayload;
@@ -188,7 +194,9 @@ describe('POST /api/session/refresh', () => {
 
   test('a session ends on its day, however often it was renewed, and the next sign-in clears it away', async () => {
     const next = cookieOf(await refresh(await freshCookie()).expect(200));
-    await desk.rows("UPDATE refresh_session SET created_at = now() - interval '15 days', expires_at = now() - interval '1 second'");
+    await desk.rows(
+      "UPDATE refresh_session SET created_at = now() - interval '15 days', expires_at = now() - interval '1 second'",
+    );
     await refresh(next).expect(401);
     const ended = 'SELECT 1 FROM refresh_session WHERE person_id = $1 AND expires_at < now()';
     expect(await desk.rows(ended, [desk.people.artist.id])).not.toEqual([]);
@@ -204,7 +212,9 @@ describe('DELETE /api/session', () => {
     const response = await request(desk.app).delete('/api/session').set(OWN).set('Cookie', cookie).expect(204);
     expect(response.get('Set-Cookie')![0]).toMatch(/^lollop-refresh=; Path=\/; Expires=Thu, 01 Jan 1970/);
     await refresh(cookie).expect(401);
-    const events = await desk.rows("SELECT person_id FROM audit_event WHERE kind = 'signed-out' ORDER BY created_at DESC LIMIT 1");
+    const events = await desk.rows(
+      "SELECT person_id FROM audit_event WHERE kind = 'signed-out' ORDER BY created_at DESC LIMIT 1",
+    );
     expect(events).toEqual([{ person_id: desk.people.artist.id }]);
   });
 

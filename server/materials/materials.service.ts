@@ -29,11 +29,14 @@ export class MaterialsService {
 
   /** Adds the shipped versions that are not there yet; those that are stay as they are. */
   async addPresets(): Promise<void> {
-    const rows = z.array(materialPresetSchema).parse(presets).map(({ youngsModulusRange, ...rest }) => ({
-      ...rest,
-      youngsModulusLow: youngsModulusRange?.[0] ?? null,
-      youngsModulusHigh: youngsModulusRange?.[1] ?? null,
-    }));
+    const rows = z
+      .array(materialPresetSchema)
+      .parse(presets)
+      .map(({ youngsModulusRange, ...rest }) => ({
+        ...rest,
+        youngsModulusLow: youngsModulusRange?.[0] ?? null,
+        youngsModulusHigh: youngsModulusRange?.[1] ?? null,
+      }));
     await this.data.createQueryBuilder().insert().into(Material).values(rows).orIgnore().execute();
   }
 

@@ -7,7 +7,11 @@ import { plainText } from '../plain-text';
 export function modelUpload(): RequestHandler[] {
   const limits = { fileSize: MAX_UPLOAD_BYTES, files: 1, fields: 2, fieldSize: 4 * MAX_NAME, parts: 4 };
   // The package's types do not know `defParamCharset` yet; without it file names are read as Latin-1.
-  const options: multer.Options & { defParamCharset: string } = { storage: multer.memoryStorage(), limits, defParamCharset: 'utf8' };
+  const options: multer.Options & { defParamCharset: string } = {
+    storage: multer.memoryStorage(),
+    limits,
+    defParamCharset: 'utf8',
+  };
   const reader = multer(options);
   const plainName: RequestHandler = (req, _res, next) => {
     const name: unknown = req.body?.name;

@@ -6,6 +6,7 @@ import { NotAllowed } from '../problems/domain-errors';
  * CORS permission that we never give.
  */
 export const ownClient: RequestHandler = (req, _res, next) => {
-  if (req.get('x-lollop') !== '1') throw new NotAllowed('This address answers only to Lollop itself (header X-Lollop: 1).');
+  if (req.get('x-lollop') !== '1')
+    throw new NotAllowed('This address answers only to Lollop itself (header X-Lollop: 1).');
   next();
 };

@@ -15,7 +15,10 @@ export function faultsOf(error: z.ZodError, prefix = ''): Fault[] {
 export function parseBody<T extends z.ZodType>(schema: T, req: Request): z.output<T> {
   const parsed = schema.safeParse(req.body ?? {});
   if (parsed.success) return parsed.data;
-  throw new InvalidRequest('Some of what was sent does not fit. Mend what is marked and send it again.', faultsOf(parsed.error));
+  throw new InvalidRequest(
+    'Some of what was sent does not fit. Mend what is marked and send it again.',
+    faultsOf(parsed.error),
+  );
 }
 
 export function parseQuery<T extends z.ZodType>(schema: T, req: Request): z.output<T> {

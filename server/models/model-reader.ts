@@ -73,15 +73,29 @@ export class ModelReader {
         resolve(answer);
       };
       const clock = setTimeout(
-        () => finish(unreadable(`Reading the file took longer than ${seconds} s and was stopped. Nothing was kept. Export fewer surfaces at a time.`)),
+        () =>
+          finish(
+            unreadable(
+              `Reading the file took longer than ${seconds} s and was stopped. Nothing was kept. Export fewer surfaces at a time.`,
+            ),
+          ),
         seconds * 1000,
       );
       const watch = setInterval(async () => {
         if (child.pid === undefined || (await residentBytes(child.pid)) <= megabytes * MEGABYTE) return;
-        finish(unreadable(`Reading the file took more than ${megabytes} MB of memory and was stopped. Nothing was kept. Export fewer surfaces at a time.`));
+        finish(
+          unreadable(
+            `Reading the file took more than ${megabytes} MB of memory and was stopped. Nothing was kept. Export fewer surfaces at a time.`,
+          ),
+        );
       }, WATCH_MILLISECONDS);
 
-      const broken = () => finish(unreadable('The reader gave up on this file. Nothing was kept. Export it again, as STEP or as Bézier patches.'));
+      const broken = () =>
+        finish(
+          unreadable(
+            'The reader gave up on this file. Nothing was kept. Export it again, as STEP or as Bézier patches.',
+          ),
+        );
       child.once('message', (answer) => finish(answer as ReadAnswer));
       child.once('error', broken);
       child.once('exit', broken);

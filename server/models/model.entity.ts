@@ -1,4 +1,15 @@
-import { Check, Column, CreateDateColumn, Entity, Index, JoinColumn, ManyToOne, PrimaryGeneratedColumn, type Relation, Unique } from 'typeorm';
+import {
+  Check,
+  Column,
+  CreateDateColumn,
+  Entity,
+  Index,
+  JoinColumn,
+  ManyToOne,
+  PrimaryGeneratedColumn,
+  type Relation,
+  Unique,
+} from 'typeorm';
 import type { ImportReport, Model as ModelWire } from '../../shared/wire/models';
 import { Person } from '../people/person.entity';
 import { Production } from '../productions/production.entity';

@@ -25,7 +25,9 @@ export class ModelsController {
   upload: RequestHandler = async (req, res) => {
     const { name } = parseBody(modelUploadFieldsSchema, req);
     if (!req.file) {
-      throw new InvalidRequest('No file came with the request.', [{ pointer: '/file', detail: 'Choose a model file.' }]);
+      throw new InvalidRequest('No file came with the request.', [
+        { pointer: '/file', detail: 'Choose a model file.' },
+      ]);
     }
     const { originalname: fileName, buffer: bytes } = req.file;
     const productionId = pathId(req, 'productionId', 'production');

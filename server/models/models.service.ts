@@ -126,7 +126,9 @@ export class ModelsService {
   /** The patches as JSON, zipped as they are kept when the reader of the answer can take that. */
   async patches(actor: Actor, id: string, takesGzip: boolean): Promise<PatchBytes> {
     await this.get(actor, id);
-    const { patches } = await this.data.getRepository(Model).findOneOrFail({ where: { id }, select: { id: true, patches: true } });
+    const { patches } = await this.data
+      .getRepository(Model)
+      .findOneOrFail({ where: { id }, select: { id: true, patches: true } });
     return takesGzip ? { bytes: patches, gzipped: true } : { bytes: await unzip(patches), gzipped: false };
   }
 

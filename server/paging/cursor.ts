@@ -60,7 +60,11 @@ export async function pageOf<T extends ObjectLiteral>(
       { pageValue: value, pageTie: tie },
     );
   }
-  const rows = await query.orderBy(order.column, order.direction).addOrderBy(order.tie, order.direction).limit(limit + 1).getMany();
+  const rows = await query
+    .orderBy(order.column, order.direction)
+    .addOrderBy(order.tie, order.direction)
+    .limit(limit + 1)
+    .getMany();
   const items = rows.slice(0, limit);
   const last = rows.length > limit ? items.at(-1) : undefined;
   return { items, nextCursor: last ? encode(order.keyOf(last)) : null };

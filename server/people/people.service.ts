@@ -24,9 +24,12 @@ export class PeopleService {
     const passwordHash = await this.passwords.hash(password);
     const people = this.data.getRepository(Person);
     try {
-      return await people.save(people.create({ name: name.trim(), email: normalEmail(email), passwordHash, administrator }));
+      return await people.save(
+        people.create({ name: name.trim(), email: normalEmail(email), passwordHash, administrator }),
+      );
     } catch (error) {
-      if (breaksUnique(error, 'person_email_once')) throw new Conflict('Somebody with this e-mail address is here already.');
+      if (breaksUnique(error, 'person_email_once'))
+        throw new Conflict('Somebody with this e-mail address is here already.');
       throw error;
     }
   }

@@ -3,7 +3,7 @@ import { Check, Column, CreateDateColumn, Entity, PrimaryGeneratedColumn, Unique
 @Entity('person')
 @Unique('person_email_once', ['email'])
 @Check('person_email_lower', 'email = lower(email)')
-@Check('person_name_given', "length(trim(name)) > 0")
+@Check('person_name_given', 'length(trim(name)) > 0')
 export class Person {
   @PrimaryGeneratedColumn('uuid', { primaryKeyConstraintName: 'person_pk' })
   id!: string;

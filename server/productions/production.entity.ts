@@ -2,7 +2,7 @@ import { Check, Column, CreateDateColumn, Entity, PrimaryGeneratedColumn, Unique
 
 @Entity('production')
 @Unique('production_name_once', ['name'])
-@Check('production_name_given', "length(trim(name)) > 0")
+@Check('production_name_given', 'length(trim(name)) > 0')
 @Check('production_last_run_counts', 'last_run_number >= 0')
 export class Production {
   @PrimaryGeneratedColumn('uuid', { primaryKeyConstraintName: 'production_pk' })

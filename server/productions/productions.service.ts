@@ -29,7 +29,8 @@ export class ProductionsService {
     try {
       return await productions.save(productions.create({ name: name.trim() }));
     } catch (error) {
-      if (breaksUnique(error, 'production_name_once')) throw new Conflict('There is a production of this name already.');
+      if (breaksUnique(error, 'production_name_once'))
+        throw new Conflict('There is a production of this name already.');
       throw error;
     }
   }
@@ -46,7 +47,9 @@ export class ProductionsService {
   async list(actor: Actor, request: PageRequest): Promise<Page<{ production: Production; role: Role | null }>> {
     const query = this.data.getRepository(Production).createQueryBuilder('production');
     if (!actor.administrator) {
-      query.innerJoin(Membership, 'mine', 'mine.productionId = production.id AND mine.personId = :me', { me: actor.id });
+      query.innerJoin(Membership, 'mine', 'mine.productionId = production.id AND mine.personId = :me', {
+        me: actor.id,
+      });
     }
     const page = await pageOf(query, BY_NAME, request);
     const mine = await this.memberships.ofPerson(actor.id);

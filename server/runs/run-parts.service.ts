@@ -34,7 +34,9 @@ export class RunPartsService {
     await this.change(actor, runId, sent, async (manager, run, content) => {
       const wanted = chunksOf(run);
       if (index >= wanted) {
-        throw new InvalidRequest(`The run has ${wanted} chunks.`, [{ pointer: '/path/index', detail: `Count from 0 to ${wanted - 1}.` }]);
+        throw new InvalidRequest(`The run has ${wanted} chunks.`, [
+          { pointer: '/path/index', detail: `Count from 0 to ${wanted - 1}.` },
+        ]);
       }
       const kept = await manager.findOneBy(RunChunk, { runId, index });
       if (kept) return requireSame(kept.sha256, sent.sha256, `Chunk ${index}`);
@@ -59,7 +61,8 @@ export class RunPartsService {
     await this.change(actor, runId, sent, async (manager, run, content) => {
       requireUnfinished(run);
       const poses = Math.min(posesOf(run), FRAMES_PER_CHUNK * (await manager.countBy(RunChunk, { runId })));
-      if (frame > poses) throw new Conflict(`The chunks that have arrived hold ${poses} poses. Send those up to frame ${frame} first.`);
+      if (frame > poses)
+        throw new Conflict(`The chunks that have arrived hold ${poses} poses. Send those up to frame ${frame} first.`);
       await manager.upsert(RunCheckpoint, { runId, frame, ...content }, ['runId']);
     });
   }
@@ -68,14 +71,16 @@ export class RunPartsService {
     await this.runs.requireMayRead(actor, runId);
     const chunks = this.data.getRepository(RunChunk);
     const where = { runId, index };
-    const read = async () => (await chunks.findOneOrFail({ where, select: { runId: true, index: true, content: true } })).content;
+    const read = async () =>
+      (await chunks.findOneOrFail({ where, select: { runId: true, index: true, content: true } })).content;
     return kept(await chunks.findOneBy(where), 'chunk', read);
   }
 
   async recipe(actor: Actor, runId: string): Promise<Kept> {
     await this.runs.requireMayRead(actor, runId);
     const recipes = this.data.getRepository(RunRecipe);
-    const read = async () => (await recipes.findOneOrFail({ where: { runId }, select: { runId: true, content: true } })).content;
+    const read = async () =>
+      (await recipes.findOneOrFail({ where: { runId }, select: { runId: true, content: true } })).content;
     return kept(await recipes.findOneBy({ runId }), 'surface recipe', read);
   }
 
@@ -93,7 +98,11 @@ export class RunPartsService {
     actor: Actor,
     runId: string,
     { bytes, sha256 }: Sent,
-    work: (manager: EntityManager, run: Run, content: { bytes: number; sha256: string; content: Buffer }) => Promise<void>,
+    work: (
+      manager: EntityManager,
+      run: Run,
+      content: { bytes: number; sha256: string; content: Buffer },
+    ) => Promise<void>,
   ): Promise<void> {
     await this.runs.requireMayBake(actor, runId);
     if (createHash('sha256').update(bytes).digest('hex') !== sha256) throw new ChecksumMismatch();

@@ -54,7 +54,9 @@ export class RunViews {
     ]);
     return runs.map((run) => ({
       run,
-      chunks: chunks.filter(({ runId }) => runId === run.id).map(({ index, bytes, sha256 }) => ({ index, bytes, sha256 })),
+      chunks: chunks
+        .filter(({ runId }) => runId === run.id)
+        .map(({ index, bytes, sha256 }) => ({ index, bytes, sha256 })),
       recipeSha256: recipes.find(({ runId }) => runId === run.id)?.sha256 ?? null,
       checkpointFrame: checkpoints.find(({ runId }) => runId === run.id)?.frame ?? null,
     }));

@@ -22,7 +22,10 @@ import { SceneRevision } from '../scenes/scene-revision.entity';
 @Unique('run_number_once', ['productionId', 'number'])
 @Check('run_number_counts', 'number >= 1')
 @Check('run_status_known', "status IN ('baking', 'complete')")
-@Check('run_complete_whole', "(status = 'complete') = (completed_at IS NOT NULL) AND (status = 'complete') = (traces IS NOT NULL)")
+@Check(
+  'run_complete_whole',
+  "(status = 'complete') = (completed_at IS NOT NULL) AND (status = 'complete') = (traces IS NOT NULL)",
+)
 @Check('run_frames_fit', 'frames BETWEEN 1 AND 4800')
 @Check('run_rate_fits', 'frames_per_second BETWEEN 1 AND 240')
 export class Run {
@@ -79,7 +82,11 @@ export class Run {
   /** Both columns, so that the scene is of the same production. */
   @ManyToOne(() => Scene, { onDelete: 'RESTRICT' })
   @JoinColumn([
-    { name: 'production_id', referencedColumnName: 'productionId', foreignKeyConstraintName: 'run_scene_in_production' },
+    {
+      name: 'production_id',
+      referencedColumnName: 'productionId',
+      foreignKeyConstraintName: 'run_scene_in_production',
+    },
     { name: 'scene_id', referencedColumnName: 'id', foreignKeyConstraintName: 'run_scene_in_production' },
   ])
   scene!: Relation<Scene>;

@@ -36,7 +36,16 @@ export class RunsService {
     }
     const id = await this.data.transaction(async (manager) => {
       const number = await this.productions.nextRunNumber(manager, productionId);
-      const values = { productionId, sceneId, revisionId, number, frames, framesPerSecond, provenance, createdById: actor.id };
+      const values = {
+        productionId,
+        sceneId,
+        revisionId,
+        number,
+        frames,
+        framesPerSecond,
+        provenance,
+        createdById: actor.id,
+      };
       const run = manager.create(Run, values);
       await manager.insert(Run, run);
       await this.record(manager, 'run-started', actor, run, address);
@@ -99,7 +108,8 @@ export class RunsService {
     await this.requireMayBake(actor, id);
     await this.data.transaction(async (manager) => {
       const run = await this.lock(manager, id);
-      if (run.status === 'complete') throw new Conflict('A complete run is kept. Only unfinished ones can be thrown away.');
+      if (run.status === 'complete')
+        throw new Conflict('A complete run is kept. Only unfinished ones can be thrown away.');
       await manager.delete(Run, { id });
       await this.record(manager, 'run-deleted', actor, run, address);
     });
@@ -121,7 +131,8 @@ export class RunsService {
   private async requireWhole(manager: EntityManager, run: Run): Promise<void> {
     const arrived = await manager.countBy(RunChunk, { runId: run.id });
     const wanted = chunksOf(run);
-    if (arrived < wanted) throw new Conflict(`${arrived} of ${wanted} chunks have arrived. Send the others, then complete the run.`);
+    if (arrived < wanted)
+      throw new Conflict(`${arrived} of ${wanted} chunks have arrived. Send the others, then complete the run.`);
     if (await manager.existsBy(RunRecipe, { runId: run.id })) return;
     throw new Conflict('The surface recipe has not arrived. Send it, then complete the run.');
   }
@@ -131,7 +142,13 @@ export class RunsService {
     return run?.traces ?? null;
   }
 
-  private record(manager: EntityManager, kind: 'run-started' | 'run-completed' | 'run-deleted', actor: Actor, run: Run, address?: string) {
+  private record(
+    manager: EntityManager,
+    kind: 'run-started' | 'run-completed' | 'run-deleted',
+    actor: Actor,
+    run: Run,
+    address?: string,
+  ) {
     const details = { runId: run.id, number: run.number };
     return this.audit.record(manager, { kind, personId: actor.id, productionId: run.productionId, address, details });
   }
@@ -139,16 +156,26 @@ export class RunsService {
 
 function lengthFaults(traces: RunTraces, poses: number): Fault[] {
   const lists = [
-    ...traces.gauges.map(({ displacement }, i) => ({ pointer: `/traces/gauges/${i}/displacement`, length: displacement.length })),
-    ...(['energy', 'volumeChange', 'worstCompression'] as const).map((key) => ({ pointer: `/traces/${key}`, length: traces[key].length })),
+    ...traces.gauges.map(({ displacement }, i) => ({
+      pointer: `/traces/gauges/${i}/displacement`,
+      length: displacement.length,
+    })),
+    ...(['energy', 'volumeChange', 'worstCompression'] as const).map((key) => ({
+      pointer: `/traces/${key}`,
+      length: traces[key].length,
+    })),
   ];
   return lists
     .filter(({ length }) => length !== poses)
-    .map(({ pointer, length }) => ({ pointer, detail: `Give ${poses} values, frame 0 included; there are ${length}.` }));
+    .map(({ pointer, length }) => ({
+      pointer,
+      detail: `Give ${poses} values, frame 0 included; there are ${length}.`,
+    }));
 }
 
 /** Key order and -0 do not survive jsonb, so both sides go through the schema and JSON once more. */
 function requireSameTraces(stored: RunTraces | null, sent: RunTraces): void {
   const plain = (traces: RunTraces | null) => JSON.stringify(runTracesSchema.nullable().parse(traces));
-  if (plain(stored) !== plain(sent)) throw new Conflict('The run is complete already, with other traces. It is kept as it is.');
+  if (plain(stored) !== plain(sent))
+    throw new Conflict('The run is complete already, with other traces. It is kept as it is.');
 }

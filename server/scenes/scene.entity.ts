@@ -1,4 +1,15 @@
-import { Check, Column, CreateDateColumn, Entity, Index, JoinColumn, ManyToOne, PrimaryGeneratedColumn, type Relation, Unique } from 'typeorm';
+import {
+  Check,
+  Column,
+  CreateDateColumn,
+  Entity,
+  Index,
+  JoinColumn,
+  ManyToOne,
+  PrimaryGeneratedColumn,
+  type Relation,
+  Unique,
+} from 'typeorm';
 import { Model } from '../models/model.entity';
 import { Person } from '../people/person.entity';
 import { Production } from '../productions/production.entity';
@@ -39,7 +50,11 @@ export class Scene {
   /** Both columns, so that the model is of the same production. */
   @ManyToOne(() => Model, { onDelete: 'RESTRICT' })
   @JoinColumn([
-    { name: 'production_id', referencedColumnName: 'productionId', foreignKeyConstraintName: 'scene_model_in_production' },
+    {
+      name: 'production_id',
+      referencedColumnName: 'productionId',
+      foreignKeyConstraintName: 'scene_model_in_production',
+    },
     { name: 'model_id', referencedColumnName: 'id', foreignKeyConstraintName: 'scene_model_in_production' },
   ])
   model!: Relation<Model>;

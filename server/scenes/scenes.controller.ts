@@ -26,7 +26,11 @@ export class ScenesController {
   };
 
   revisions: RequestHandler = async (req, res) => {
-    const page = await this.scenes.revisions(actorOf(res), pathId(req, 'sceneId', 'scene'), parseQuery(pageQuerySchema, req));
+    const page = await this.scenes.revisions(
+      actorOf(res),
+      pathId(req, 'sceneId', 'scene'),
+      parseQuery(pageQuerySchema, req),
+    );
     res.json({ items: page.items.map(revisionRef), nextCursor: page.nextCursor });
   };
 

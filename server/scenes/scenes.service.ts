@@ -26,14 +26,31 @@ export class ScenesService {
   ) {}
 
   /** Makes the scene with its revision 1. @throws InvalidRequest when the document does not fit its model */
-  async create(actor: Actor, productionId: string, wanted: z.output<typeof sceneCreateSchema>, address?: string): Promise<SceneWithLatest> {
+  async create(
+    actor: Actor,
+    productionId: string,
+    wanted: z.output<typeof sceneCreateSchema>,
+    address?: string,
+  ): Promise<SceneWithLatest> {
     await this.memberships.require(actor, productionId, 'technical-director');
     const model = await this.modelFor(productionId, wanted.document);
     await this.check(wanted.document, model);
     const id = await this.data.transaction(async (manager) => {
-      const scene = manager.create(Scene, { productionId, modelId: model.id, name: wanted.name, latestNumber: 1, createdById: actor.id });
+      const scene = manager.create(Scene, {
+        productionId,
+        modelId: model.id,
+        name: wanted.name,
+        latestNumber: 1,
+        createdById: actor.id,
+      });
       await manager.insert(Scene, scene);
-      await this.insert(manager, { sceneId: scene.id, number: 1, remark: '', document: wanted.document, createdById: actor.id });
+      await this.insert(manager, {
+        sceneId: scene.id,
+        number: 1,
+        remark: '',
+        document: wanted.document,
+        createdById: actor.id,
+      });
       const details = { sceneId: scene.id, name: scene.name };
       await this.audit.record(manager, { kind: 'scene-created', personId: actor.id, productionId, address, details });
       return scene.id;
@@ -75,13 +92,21 @@ export class ScenesService {
   }
 
   /** Adds a revision on top of the newest. @throws Conflict when `basedOn` is not the newest any more */
-  async addRevision(actor: Actor, sceneId: string, wanted: z.output<typeof revisionCreateSchema>, address?: string): Promise<SceneRevision> {
+  async addRevision(
+    actor: Actor,
+    sceneId: string,
+    wanted: z.output<typeof revisionCreateSchema>,
+    address?: string,
+  ): Promise<SceneRevision> {
     const { productionId, model } = await this.get(actor, sceneId);
     await this.memberships.require(actor, productionId, 'technical-director', 'scene');
     await this.check(wanted.document, model);
     const id = await this.data.transaction(async (manager) => {
       // The lock makes the second of two saves wait, and then see that it is not based on the newest.
-      const { latestNumber } = await manager.findOneOrFail(Scene, { where: { id: sceneId }, lock: { mode: 'pessimistic_write' } });
+      const { latestNumber } = await manager.findOneOrFail(Scene, {
+        where: { id: sceneId },
+        lock: { mode: 'pessimistic_write' },
+      });
       if (wanted.basedOn !== latestNumber) {
         throw new Conflict(
           `The newest revision is ${latestNumber}, and these changes were made on ${wanted.basedOn}. ` +
@@ -104,7 +129,9 @@ export class ScenesService {
     const model = geometry.kind === 'model' ? await this.models.inProduction(productionId, geometry.modelId) : null;
     if (model) return model;
     const pointer = geometry.kind === 'model' ? '/document/geometry/modelId' : '/document/geometry';
-    throw new InvalidRequest('The scene needs a model of this production.', [{ pointer, detail: 'Choose a model of this production.' }]);
+    throw new InvalidRequest('The scene needs a model of this production.', [
+      { pointer, detail: 'Choose a model of this production.' },
+    ]);
   }
 
   private async check(document: SceneDocument, model: DocumentModel): Promise<void> {
@@ -112,7 +139,8 @@ export class ScenesService {
     for (const [index, { preset }] of document.materials.entries()) {
       if (preset && !(await this.materials.exists(preset))) faults.push(unknownPreset(index));
     }
-    if (faults.length > 0) throw new InvalidRequest('The scene does not fit. Mend what is marked and save again.', faults);
+    if (faults.length > 0)
+      throw new InvalidRequest('The scene does not fit. Mend what is marked and save again.', faults);
   }
 
   private async insert(manager: EntityManager, values: NewRevision): Promise<string> {
@@ -126,7 +154,12 @@ export class ScenesService {
       .getRepository(Scene)
       .createQueryBuilder('scene')
       .innerJoinAndSelect('scene.model', 'model')
-      .innerJoinAndMapOne('scene.latest', SceneRevision, 'latest', 'latest.sceneId = scene.id AND latest.number = scene.latestNumber')
+      .innerJoinAndMapOne(
+        'scene.latest',
+        SceneRevision,
+        'latest',
+        'latest.sceneId = scene.id AND latest.number = scene.latestNumber',
+      )
       .innerJoinAndSelect('latest.createdBy', 'latestBy');
   }
 
@@ -153,5 +186,8 @@ export class ScenesService {
 }
 
 function unknownPreset(index: number): Fault {
-  return { pointer: `/document/materials/${index}/preset`, detail: 'The library has no such preset in this version. Choose one, or give own numbers.' };
+  return {
+    pointer: `/document/materials/${index}/preset`,
+    detail: 'The library has no such preset in this version. Choose one, or give own numbers.',
+  };
 }

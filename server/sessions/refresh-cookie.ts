@@ -3,7 +3,12 @@ import type { CookieOptions, Request, Response } from 'express';
 /** The `__Host-` prefix makes browsers insist on Secure, Path=/ and no Domain; plain http cannot have it. */
 const nameFor = (req: Request) => (req.secure ? '__Host-lollop-refresh' : 'lollop-refresh');
 
-const optionsFor = (req: Request): CookieOptions => ({ httpOnly: true, sameSite: 'strict', secure: req.secure, path: '/' });
+const optionsFor = (req: Request): CookieOptions => ({
+  httpOnly: true,
+  sameSite: 'strict',
+  secure: req.secure,
+  path: '/',
+});
 
 export function readRefreshCookie(req: Request): string | undefined {
   const value: unknown = req.cookies?.[nameFor(req)];

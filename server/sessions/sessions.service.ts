@@ -45,7 +45,9 @@ export class SessionsService {
     const expiresAt = new Date(Date.now() + this.sessionDays * DAY);
     const session = await this.data.transaction(async (manager) => {
       await manager.delete(RefreshSession, { personId: person.id, expiresAt: LessThan(new Date()) });
-      const begun = await manager.save(manager.create(RefreshSession, { personId: person.id, expiresAt, revokedAt: null }));
+      const begun = await manager.save(
+        manager.create(RefreshSession, { personId: person.id, expiresAt, revokedAt: null }),
+      );
       await manager.insert(RefreshToken, { hash: this.tokens.hash(refreshToken), sessionId: begun.id, usedAt: null });
       await this.audit.record(manager, { kind: 'signed-in', personId: person.id, address });
       return begun;

@@ -21,16 +21,22 @@ export class Tokens {
   access({ personId, sessionId }: AccessClaims): { accessToken: string; expiresAt: Date } {
     const issued = Math.floor(Date.now() / 1000);
     const expires = issued + this.accessMinutes * 60;
-    const accessToken = jwt.sign({ sub: personId, sid: sessionId, iat: issued, exp: expires, iss: ISSUER }, this.secret, {
-      algorithm: 'HS256',
-    });
+    const accessToken = jwt.sign(
+      { sub: personId, sid: sessionId, iat: issued, exp: expires, iss: ISSUER },
+      this.secret,
+      {
+        algorithm: 'HS256',
+      },
+    );
     return { accessToken, expiresAt: new Date(expires * 1000) };
   }
 
   /** @throws NotSignedIn when the token is not ours, was changed or has expired */
   readAccess(token: string): AccessClaims {
     try {
-      const { sub, sid } = claimsSchema.parse(jwt.verify(token, this.secret, { algorithms: ['HS256'], issuer: ISSUER }));
+      const { sub, sid } = claimsSchema.parse(
+        jwt.verify(token, this.secret, { algorithms: ['HS256'], issuer: ISSUER }),
+      );
       return { personId: sub, sessionId: sid };
     } catch {
       throw new NotSignedIn();

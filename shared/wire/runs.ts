@@ -8,7 +8,11 @@ export const runStatusSchema = z.enum(['baking', 'complete', 'stopped']);
 /** Values by frame, frame 0 (rest) first; SI. */
 export const runTracesSchema = z.object({
   gauges: z.array(
-    z.object({ id: z.string(), name: z.string(), displacement: z.array(z.tuple([z.number(), z.number(), z.number()])) }),
+    z.object({
+      id: z.string(),
+      name: z.string(),
+      displacement: z.array(z.tuple([z.number(), z.number(), z.number()])),
+    }),
   ),
   /** J, kinetic + elastic */
   energy: z.array(z.number()),
@@ -27,7 +31,9 @@ export const runProvenanceSchema = z.object({
   basis: z.union([z.literal(4), z.literal(10)]),
   /** m, the model's diagonal in metres */
   diagonal: z.number().positive(),
-  materials: z.array(z.object({ name: z.string(), presetId: z.string().nullable(), presetVersion: z.int().nullable() })),
+  materials: z.array(
+    z.object({ name: z.string(), presetId: z.string().nullable(), presetVersion: z.int().nullable() }),
+  ),
 });
 
 /** POST /api/scenes/:sceneId/runs → 201 runSchema */

@@ -9,7 +9,11 @@ import type { Desk, PersonKey } from './desk';
 export const sha256 = (bytes: Uint8Array) => createHash('sha256').update(bytes).digest('hex');
 
 /** A model that was never a file: enough for scenes and runs, without a child process. */
-export async function aModel(desk: Desk, productionId = desk.fair, by: PersonKey = 'technicalDirector'): Promise<string> {
+export async function aModel(
+  desk: Desk,
+  productionId = desk.fair,
+  by: PersonKey = 'technicalDirector',
+): Promise<string> {
   const original = Buffer.from('not read in this test');
   const model = desk.data.getRepository(Model).create({
     productionId,
@@ -91,7 +95,11 @@ export function aRunRequest(revisionId: string, frames = 30): RunCreate {
 
 export async function aRun(desk: Desk, frames = 30, scene?: MadeScene): Promise<string> {
   const { sceneId, revisionId } = scene ?? (await aScene(desk));
-  const { run } = await desk.services.runs.start(desk.people.technicalDirector, sceneId, aRunRequest(revisionId, frames));
+  const { run } = await desk.services.runs.start(
+    desk.people.technicalDirector,
+    sceneId,
+    aRunRequest(revisionId, frames),
+  );
   return run.id;
 }
 
@@ -105,7 +113,8 @@ export function someTraces(frames: number): RunTraces {
   };
 }
 
-export const someBytes = (seed: number, length = 64) => Buffer.from(Array.from({ length }, (_, i) => (i * 31 + seed * 17) % 256));
+export const someBytes = (seed: number, length = 64) =>
+  Buffer.from(Array.from({ length }, (_, i) => (i * 31 + seed * 17) % 256));
 
 /** Every chunk and the recipe, so that the run can be completed. */
 export async function sendParts(desk: Desk, runId: string, frames = 30): Promise<void> {
