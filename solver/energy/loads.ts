@@ -1,0 +1,122 @@
+import type { Prepared } from '../quadrature/prepared';
+import { samplesInRegion } from '../quadrature/regions';
+import type { Scene } from '../scene';
+import { applyForm } from './body-forms';
+import { evaluateRow, scatterRow } from './rows';
+
+/** A load that found its samples, ready to be added to the force vector. */
+interface Placed {
+  load: Scene['loads'][number];
+  samples: Int32Array;
+  area: number;
+}
+
+/** The scene's loads on one prepared body. Forces in N. Throws RangeError when a region touches nothing. */
+export class Loads {
+  private readonly placed: Placed[];
+  private readonly gravity: Float64Array;
+  private readonly scratch: Float64Array[] = [new Float64Array(3), new Float64Array(3), new Float64Array(3)];
+
+  constructor(
+    private readonly prepared: Prepared,
+    scene: Scene,
+  ) {
+    const { samples, report } = prepared;
+    this.placed = scene.loads
+      .filter((load) => load.kind !== 'gravity')
+      .map((load) => {
+        const region = 'region' in load ? load.region : ({ kind: 'all' } as const);
+        const chosen = samplesInRegion(samples, region, report.diagonal);
+        if (chosen.length === 0) throw new RangeError(`Load ${load.id} (${load.name}) touches no surface. Move its region onto the body.`);
+        return { load, samples: chosen, area: chosen.reduce((sum, s) => sum + samples.areas[s]!, 0) };
+      });
+    this.gravity = gravityForce(prepared, scene);
+  }
+
+  /** The wind's and pressure's push changes with the pose and must be renewed within a step. */
+  get followsSurface(): boolean {
+    return this.placed.some(({ load }) => load.kind === 'pressure');
+  }
+
+  /** out = loads that do not depend on the pose (gravity, traction, pushes) at `time`, scaled by `share`. */
+  dead(out: Float64Array, time: number, share: number): void {
+    for (let u = 0; u < out.length; u++) out[u] = share * this.gravity[u]!;
+    const { samples } = this.prepared;
+    for (const { load, samples: chosen, area } of this.placed) {
+      if (load.kind === 'traction') {
+        for (const s of chosen) {
+          const a = share * samples.areas[s]!;
+          scatterRow(out, samples.rows, s, a * load.traction[0], a * load.traction[1], a * load.traction[2]);
+        }
+      } else if (load.kind === 'push' && time >= load.from && (load.until === null || time < load.until)) {
+        for (const s of chosen) {
+          const a = (share * samples.areas[s]!) / area;
+          scatterRow(out, samples.rows, s, a * load.force[0], a * load.force[1], a * load.force[2]);
+        }
+      }
+    }
+  }
+
+  /** out += the wind on the windward side at pose c moving with velocity v: ½ ρ C (relative normal speed)². */
+  wind(out: Float64Array, c: Float64Array, v: Float64Array, share: number): void {
+    const { samples } = this.prepared;
+    const [normal, speed] = this.scratch as [Float64Array, Float64Array, Float64Array];
+    for (const { load, samples: chosen } of this.placed) {
+      if (load.kind !== 'wind') continue;
+      for (const s of chosen) {
+        this.areaVector(normal, s, c);
+        evaluateRow(speed, samples.rows, s, v);
+        const area = Math.sqrt(normal[0]! ** 2 + normal[1]! ** 2 + normal[2]! ** 2);
+        if (!(area > 0)) continue;
+        let into = 0;
+        for (let d = 0; d < 3; d++) into += ((load.velocity[d]! - speed[d]!) * normal[d]!) / area;
+        if (into >= 0) continue;
+        const p = -0.5 * share * load.airDensity * load.dragCoefficient * into * into;
+        scatterRow(out, samples.rows, s, p * normal[0]!, p * normal[1]!, p * normal[2]!);
+      }
+    }
+  }
+
+  /** out += pressure along the current inward normals at pose c. */
+  pressure(out: Float64Array, c: Float64Array, share: number): void {
+    const normal = this.scratch[0]!;
+    for (const { load, samples: chosen } of this.placed) {
+      if (load.kind !== 'pressure') continue;
+      for (const s of chosen) {
+        this.areaVector(normal, s, c);
+        const p = -share * load.pressure;
+        scatterRow(out, this.prepared.samples.rows, s, p * normal[0]!, p * normal[1]!, p * normal[2]!);
+      }
+    }
+  }
+
+  /** Current outward area vector of a sample, m²: the cross product of its deformed tangents. */
+  private areaVector(out: Float64Array, s: number, c: Float64Array): void {
+    const { tangent1, tangent2 } = this.prepared.samples;
+    const [, a, b] = this.scratch as [Float64Array, Float64Array, Float64Array];
+    const t1 = a === out ? this.scratch[0]! : a;
+    evaluateRow(t1, tangent1, s, c);
+    const x = t1[0]!, y = t1[1]!, z = t1[2]!; // prettier-ignore
+    evaluateRow(b, tangent2, s, c);
+    out[0] = y * b[2]! - z * b[1]!;
+    out[1] = z * b[0]! - x * b[2]!;
+    out[2] = x * b[1]! - y * b[0]!;
+  }
+}
+
+/** ∫ ρ g N dV for all gravity loads of the scene, N. */
+function gravityForce(prepared: Prepared, scene: Scene): Float64Array {
+  const { parts, bodies, matrices } = prepared;
+  const { basis } = parts;
+  const force = new Float64Array(parts.count * 3 * basis);
+  const total = [0, 0, 0];
+  for (const load of scene.loads) {
+    if (load.kind === 'gravity') for (let d = 0; d < 3; d++) total[d]! += load.acceleration[d]!;
+  }
+  const uniform = new Float64Array(force.length);
+  for (let part = 0; part < parts.count; part++) {
+    for (let d = 0; d < 3; d++) uniform[(part * 3 + d) * basis] = total[d]!;
+  }
+  bodies.forEach((body, b) => applyForm(force, matrices[b]!.mass, basis, uniform, scene.materials[body.material]!.density));
+  return force;
+}

@@ -1,0 +1,183 @@
+import type { BoundKernels } from '../kernels/kernels';
+import type { BlockPattern } from '../linear/block-pattern';
+import type { Prepared } from '../quadrature/prepared';
+import type { Scene } from '../scene';
+import { addForm, applyForm } from './body-forms';
+import { constraintGradient, constraintHessian, type Constraint } from './constraints';
+import { GroundContact } from './contact';
+import { ElasticEnergy } from './elastic';
+import { Loads } from './loads';
+import { subtractRows } from './rows';
+import { carry, carryShare, penaltyStiffness, placeSupports, type PlacedSupport } from './supports';
+
+/** Weight of the stabilisation: silent on global quadratics; ten times more stiffens coarse models by .7–1 %. */
+const STABILISATION = 1e-5;
+/** Contact pressure at the depth of `CONTACT_DEPTH` × the diagonal, over E δ/ℓ. */
+const CONTACT_FACTOR = 20;
+const CONTACT_DEPTH = 1e-3;
+/** Penalty of ties over E_soft/ℓ. */
+const TIE_FACTOR = 0.5;
+
+/** All that the body's pose is worth in energy: elastic, stabilisation, supports, ties, ground, dead loads. */
+export class PotentialEnergy {
+  readonly elastic: ElasticEnergy;
+  supports: PlacedSupport[] = [];
+  loads: Loads;
+  ground: GroundContact | null = null;
+  /** The pull of a hand, when there is one. */
+  pull: Constraint | null = null;
+  /** Forces that do not change within the step, N; the gradient subtracts them. */
+  readonly dead: Float64Array;
+  /** Share of the follower pressure in force, 0…1. */
+  pressureShare = 1;
+  private readonly ties: Constraint | null;
+  private scene: Scene;
+
+  constructor(
+    private readonly prepared: Prepared,
+    scene: Scene,
+    kernels: BoundKernels,
+    private readonly pattern: BlockPattern,
+  ) {
+    this.scene = scene;
+    this.elastic = new ElasticEnergy(prepared, kernels);
+    this.dead = new Float64Array(prepared.parts.count * 3 * prepared.parts.basis);
+    const { ties } = prepared;
+    this.ties =
+      ties.count === 0
+        ? null
+        : {
+            id: 'ties',
+            rows: subtractRows(ties.a, ties.b),
+            stiffness: new Float64Array(ties.count),
+            axes: [true, true, true],
+            targets: new Float64Array(3 * ties.count),
+          };
+    this.loads = new Loads(prepared, scene);
+    this.setScene(scene);
+  }
+
+  /** Takes materials, supports, loads and obstacles of the scene; throws RangeError with a sentence when they do not fit. */
+  setScene(scene: Scene): void {
+    const { prepared } = this;
+    const { bodies, samples, ties, report } = prepared;
+    const supports = placeSupports(prepared, scene);
+    const loads = new Loads(prepared, scene);
+    this.elastic.setMaterials(scene.materials);
+    this.supports = supports;
+    this.loads = loads;
+    this.scene = scene;
+    const young = bodies.map((body) => scene.materials[body.material]!.youngsModulus);
+    if (this.ties) {
+      for (let k = 0; k < ties.count; k++) {
+        const [a, b] = [ties.bodyA[k]!, ties.bodyB[k]!];
+        const volume = Math.min(bodies[a]!.volume, bodies[b]!.volume);
+        this.ties.stiffness[k] = ties.areas[k]! * TIE_FACTOR * penaltyStiffness(Math.min(young[a]!, young[b]!), volume);
+      }
+    }
+    const obstacle = scene.obstacles[0];
+    const delta = CONTACT_DEPTH * report.diagonal;
+    this.ground = obstacle
+      ? new GroundContact(
+          samples,
+          obstacle,
+          scene.up === 'y' ? 1 : 2,
+          Float64Array.from({ length: samples.count }, (_, s) => {
+            const body = bodies[samples.body[s]!]!;
+            return (CONTACT_FACTOR * young[samples.body[s]!]!) / Math.cbrt(body.volume);
+          }),
+          delta,
+        )
+      : null;
+  }
+
+  /** Moves carried supports to `time`, or for statics to a share of their way. */
+  carrySupports(at: { time: number } | { share: number }): void {
+    for (const support of this.supports) {
+      if ('time' in at) carry(support, at.time);
+      else carryShare(support, at.share);
+    }
+  }
+
+  /** Energy at c, J, with the work of the dead loads taken off; writes the gradient to r. */
+  gradient(c: Float64Array, r: Float64Array): number {
+    const { prepared } = this;
+    r.fill(0);
+    let energy = this.elastic.gradient(c, r);
+    prepared.bodies.forEach((_, b) => {
+      const s = this.stabilisationOf(b);
+      const form = (this.scratch ??= new Float64Array(r.length));
+      form.fill(0);
+      applyForm(form, prepared.matrices[b]!.stabilisation, prepared.parts.basis, c, 1);
+      for (let u = 0; u < r.length; u++) {
+        energy += s * form[u]! * c[u]!;
+        r[u]! += 2 * s * form[u]!;
+      }
+    });
+    for (const constraint of this.constraints()) energy += constraintGradient(constraint, c, r);
+    if (this.ground) energy += this.ground.gradient(c, r);
+    for (let u = 0; u < r.length; u++) {
+      energy -= this.dead[u]! * c[u]!;
+      r[u]! -= this.dead[u]!;
+    }
+    if (this.loads.followsSurface) {
+      const push = (this.scratch ??= new Float64Array(r.length));
+      push.fill(0);
+      this.loads.pressure(push, c, this.pressureShare);
+      for (let u = 0; u < r.length; u++) r[u]! -= push[u]!;
+    }
+    return energy;
+  }
+
+  private scratch: Float64Array | null = null;
+
+  /** K += factor · the part of the Hessian that stays while materials and supports do. */
+  addConstant(K: Float64Array, factor: number): void {
+    const { prepared, pattern } = this;
+    this.elastic.addShear(K, factor);
+    prepared.bodies.forEach((_, b) =>
+      addForm(K, pattern, prepared.matrices[b]!.stabilisation, prepared.parts.basis, 2 * factor * this.stabilisationOf(b)),
+    );
+    for (const constraint of this.constraints()) {
+      if (constraint !== this.pull) constraintHessian(K, pattern, constraint, factor);
+    }
+  }
+
+  /** K += factor · the part that changes with the pose. */
+  addVarying(K: Float64Array, c: Float64Array, factor: number, definite: boolean): void {
+    this.elastic.hessian(K, factor, definite);
+    if (this.pull) constraintHessian(K, this.pattern, this.pull, factor);
+    this.ground?.hessian(K, this.pattern, c, factor);
+  }
+
+  /** K += factor · Σ ρ M; also y += factor · M x when both are given. */
+  addMass(K: Float64Array, factor: number): void {
+    const { prepared, pattern } = this;
+    prepared.bodies.forEach((body, b) =>
+      addForm(K, pattern, prepared.matrices[b]!.mass, prepared.parts.basis, factor * this.scene.materials[body.material]!.density),
+    );
+  }
+
+  applyMass(out: Float64Array, x: Float64Array): void {
+    const { prepared } = this;
+    out.fill(0);
+    prepared.bodies.forEach((body, b) =>
+      applyForm(out, prepared.matrices[b]!.mass, prepared.parts.basis, x, this.scene.materials[body.material]!.density),
+    );
+  }
+
+  private stabilisationOf(b: number): number {
+    const { bodies, parts } = this.prepared;
+    const body = bodies[b]!;
+    let h = 0;
+    for (let i = 0; i < body.partCount; i++) h += parts.scales[body.firstPart + i]!;
+    h /= body.partCount;
+    return (STABILISATION * this.scene.materials[body.material]!.youngsModulus) / (h * h);
+  }
+
+  private *constraints(): Generator<Constraint> {
+    for (const support of this.supports) yield support.constraint;
+    if (this.ties) yield this.ties;
+    if (this.pull) yield this.pull;
+  }
+}

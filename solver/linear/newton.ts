@@ -1,0 +1,118 @@
+/**
+ * Newton's method with a line search on a total energy, for pose problems in which a full step may turn the body
+ * inside out. Steps are measured as the largest change of a coefficient over the model's size.
+ */
+
+export interface NewtonProblem {
+  /** Total energy at c (J); writes its gradient to r. Infinity or NaN: the pose is not allowed. */
+  evaluate(c: Float64Array, r: Float64Array): number;
+  /** Smallest J of the pose last evaluated. */
+  worstJ(): number;
+  /** Factors the Hessian at the pose last evaluated. False when it is not positive definite. */
+  refresh(definite: boolean): boolean;
+  /** Solves with the factor, in place. */
+  solve(x: Float64Array): void;
+  /** Tells that a share s of the step delta was taken from the pose of the last refresh. */
+  stepped(delta: Float64Array, s: number): void;
+}
+
+export interface NewtonOptions {
+  /** Converged when a step changes no coefficient by more than this share of `size`. */
+  tolerance: number;
+  /** m */
+  size: number;
+  maxSteps: number;
+  /** 'every': a new factor each step; 'lagged': the factor is kept while steps shrink well. */
+  factor: 'every' | 'lagged';
+  /** Lagged only: whether a factor of an earlier call may be used first. */
+  keepFactor: boolean;
+  /** Full steps are taken without asking the energy (mixed-pressure Newton), as long as J allows. */
+  trustFullSteps: boolean;
+}
+
+export interface NewtonReport {
+  converged: boolean;
+  steps: number;
+  factors: number;
+  /** last step over size */
+  change: number;
+  changes: number[];
+}
+
+const WORST_J = 0.02;
+/** A lagged factor is renewed when a step is not at least this much smaller than the one before. */
+const SLOW = 0.35;
+
+/** Minimises from c in place. r holds the gradient at the final c on return. */
+export function minimise(problem: NewtonProblem, c: Float64Array, r: Float64Array, options: NewtonOptions): NewtonReport {
+  const { tolerance, size, maxSteps } = options;
+  const n = c.length;
+  const delta = new Float64Array(n);
+  const trial = new Float64Array(n);
+  const trialGradient = new Float64Array(n);
+  let energy = problem.evaluate(c, r);
+  let fresh = !(options.factor === 'lagged' && options.keepFactor);
+  let factors = 0;
+  let previous = Infinity;
+  const changes: number[] = [];
+  for (let step = 0; step < maxSteps; step++) {
+    const renewed = fresh || options.factor === 'every';
+    if (renewed) {
+      if (!problem.refresh(false) && !problem.refresh(true)) break;
+      factors++;
+      fresh = false;
+    }
+    for (let u = 0; u < n; u++) delta[u] = -r[u]!;
+    problem.solve(delta);
+    let slope = 0;
+    let largest = 0;
+    for (let u = 0; u < n; u++) {
+      slope += delta[u]! * r[u]!;
+      largest = Math.max(largest, Math.abs(delta[u]!));
+    }
+    const change = largest / size;
+    if (!Number.isFinite(change)) break;
+    // A stale factor that does not help is renewed at the same pose.
+    if (!renewed && (change > SLOW * previous || slope >= 0)) {
+      fresh = true;
+      previous = Infinity;
+      continue;
+    }
+    const before = norm(r);
+    const startJ = problem.worstJ();
+    let s = 1;
+    let taken = false;
+    for (let halving = 0; halving < 24; halving++, s /= 2) {
+      for (let u = 0; u < n; u++) trial[u] = c[u]! + s * delta[u]!;
+      const e = problem.evaluate(trial, trialGradient);
+      if (!Number.isFinite(e) || !(problem.worstJ() > Math.min(WORST_J, 0.5 * startJ))) continue;
+      const trusted = options.trustFullSteps && step < 15;
+      if (trusted || e <= energy + 1e-4 * s * slope || norm(trialGradient) <= before || change < 1e-9) {
+        energy = e;
+        taken = true;
+        break;
+      }
+    }
+    if (!taken) {
+      // Put the problem's own record of the pose back to c before trying again or giving up.
+      energy = problem.evaluate(c, r);
+      if (renewed) return { converged: change < tolerance, steps: step, factors, change, changes };
+      fresh = true;
+      previous = Infinity;
+      continue;
+    }
+    c.set(trial);
+    r.set(trialGradient);
+    problem.stepped(delta, s);
+    changes.push(change);
+    previous = s < 1 ? Infinity : change;
+    if (s === 1 && change <= tolerance) return { converged: true, steps: step + 1, factors, change, changes };
+  }
+  return { converged: false, steps: maxSteps, factors, change: changes[changes.length - 1] ?? Infinity, changes };
+}
+
+function norm(r: Float64Array): number {
+  let sum = 0;
+  for (let u = 0; u < r.length; u++) sum += r[u]! * r[u]!;
+  return Math.sqrt(sum);
+}

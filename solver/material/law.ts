@@ -1,0 +1,42 @@
+import type { MaterialLaw } from '../scene';
+import { neoHookeanA } from './neo-hookean-a';
+import { neoHookeanB } from './neo-hookean-b';
+import { stableNeoHookean } from './stable-neo-hookean';
+
+/** Lamé's constants, Pa. */
+export interface Lame {
+  mu: number;
+  lambda: number;
+}
+
+/**
+ * A law of the form Ψ = μ/2 (I_C − 3) + f(J), zero at rest. `volumetric` fills out = [f, f′, f″] at J.
+ * `grouped` laws leave their λ term to the dilatation groups, which add λ/2 (mean of J − 1)².
+ */
+export interface Law {
+  name: MaterialLaw;
+  grouped: boolean;
+  volumetric(out: Float64Array, J: number, lame: Lame): void;
+}
+
+const LAWS: Record<MaterialLaw, Law> = {
+  'stable-neo-hookean': stableNeoHookean,
+  'neo-hookean-a': neoHookeanA,
+  'neo-hookean-b': neoHookeanB,
+};
+
+export const lawOf = (name: MaterialLaw): Law => LAWS[name];
+
+/** μ = E / 2(1+ν), λ = Eν / (1+ν)(1−2ν). Throws a RangeError outside E > 0, 0 ≤ ν < 0.5. */
+export function lameOf(youngsModulus: number, poissonsRatio: number): Lame {
+  if (!(youngsModulus > 0) || !Number.isFinite(youngsModulus)) {
+    throw new RangeError(`Young's modulus must be greater than 0, got ${youngsModulus}.`);
+  }
+  if (!(poissonsRatio >= 0 && poissonsRatio < 0.5)) {
+    throw new RangeError(`Poisson's ratio must be from 0 to below 0.5, got ${poissonsRatio}.`);
+  }
+  return {
+    mu: youngsModulus / (2 * (1 + poissonsRatio)),
+    lambda: (youngsModulus * poissonsRatio) / ((1 + poissonsRatio) * (1 - 2 * poissonsRatio)),
+  };
+}
