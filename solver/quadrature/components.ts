@@ -1,5 +1,5 @@
 import type { Patch } from '../geometry/patch';
-import { distanceToEdge, patchEdges, type PatchEdges } from './patch-edges';
+import { nearestOnEdge, patchEdges, type PatchEdges } from './patch-edges';
 
 /** Patches of one material that hang together by their edges. */
 export interface Components {
@@ -16,6 +16,10 @@ const JOINED = 3e-3;
 const REACH = 0.25;
 /** … and does not take a partner much farther than the nearest. */
 const NEAREST = 1.5;
+/** Least cosine between a gap and the surfaces it is to bridge. */
+const FLUSH = 0.3;
+/** Places of an edge that are looked at. */
+const LOOKS = 17;
 
 /**
  * Joins patches whose edges coincide, then lets edges that stayed free find the nearest other free
@@ -67,40 +71,60 @@ function coverage(
   tell: (other: number, share: number) => void,
 ): number {
   const from = edges.start[edge]!;
-  const count = edges.start[edge + 1]! - from;
-  const covered = new Uint8Array(count);
+  const steps = edges.start[edge + 1]! - from - 1;
+  const covered = new Uint8Array(LOOKS);
   for (const other of others) {
     let hits = 0;
-    for (let i = 0; i < count; i++) {
-      const o = 3 * (from + i);
-      if (distanceToEdge(edges, other, edges.points[o]!, edges.points[o + 1]!, edges.points[o + 2]!) <= tolerance) {
+    for (let i = 0; i < LOOKS; i++) {
+      const o = 3 * (from + Math.round((i * steps) / (LOOKS - 1)));
+      if (nearestOnEdge(nearest, edges, other, edges.points[o]!, edges.points[o + 1]!, edges.points[o + 2]!) <= tolerance) {
         covered[i] = 1;
         hits++;
       }
     }
-    tell(other, hits / count);
+    tell(other, hits / LOOKS);
   }
   let total = 0;
-  for (let i = 0; i < count; i++) total += covered[i]!;
-  return total / count;
+  for (let i = 0; i < LOOKS; i++) total += covered[i]!;
+  return total / LOOKS;
 }
 
 function joinNearest(edges: PatchEdges, edge: number, others: readonly number[], reach: number, parent: Int32Array): void {
-  const from = edges.start[edge]!;
-  const count = edges.start[edge + 1]! - from;
-  const mean = others.map((other) => {
-    let sum = 0;
-    for (let i = 0; i < count; i++) {
-      const o = 3 * (from + i);
-      sum += Math.min(reach * 4, distanceToEdge(edges, other, edges.points[o]!, edges.points[o + 1]!, edges.points[o + 2]!));
-    }
-    return sum / count;
-  });
-  const nearest = Math.min(reach, ...mean);
+  const distances = others.map((other) => gapBetween(edges, edge, other, reach));
+  const least = Math.min(reach, ...distances);
   others.forEach((other, n) => {
-    if (mean[n]! <= reach && mean[n]! <= NEAREST * nearest) join(parent, edge >> 2, other >> 2);
+    if (distances[n]! <= reach && distances[n]! <= NEAREST * least) join(parent, edge >> 2, other >> 2);
   });
 }
+
+/**
+ * Mean distance between two free edges, Infinity when one is no continuation of the other: the gap
+ * must run along one of the surfaces (or its extension), so that sheets stacked above one another stay apart.
+ */
+function gapBetween(edges: PatchEdges, edge: number, other: number, reach: number): number {
+  const { points, outward, start } = edges;
+  const from = start[edge]!;
+  const steps = start[edge + 1]! - from - 1;
+  let sum = 0;
+  let along = 0;
+  for (let i = 0; i < LOOKS; i++) {
+    const o = 3 * (from + Math.round((i * steps) / (LOOKS - 1)));
+    const distance = nearestOnEdge(nearest, edges, other, points[o]!, points[o + 1]!, points[o + 2]!);
+    sum += Math.min(4 * reach, distance);
+    const q = 3 * nearest[3]!;
+    let mine = 0;
+    let its = 0;
+    for (let d = 0; d < 3; d++) {
+      const gap = nearest[d]! - points[o + d]!;
+      mine += gap * outward[o + d]!;
+      its += gap * outward[q + d]!;
+    }
+    if (Math.abs(mine) >= FLUSH * distance || Math.abs(its) >= FLUSH * distance) along++;
+  }
+  return along >= 0.5 * LOOKS ? sum / LOOKS : Infinity;
+}
+
+const nearest = new Float64Array(4);
 
 /** Boxes of all edges, [edge][6]: min, max. */
 function edgeBoxes(edges: PatchEdges): Float64Array {

@@ -8,29 +8,34 @@ export interface PatchEdges {
   start: Int32Array;
   /** 3 · points, m */
   points: Float64Array;
+  /** 3 · points: unit, in the surface, across the edge and away from the patch (zero where it has none) */
+  outward: Float64Array;
   /** edge: length, m; 0 where the edge is pinched to a point */
   lengths: Float64Array;
 }
 
-const SEGMENTS = 16;
+/** Segments of an edge: a few a knot span, within bounds. */
+const SEGMENTS = { perSpan: 8, least: 16, most: 48 };
 
 export function patchEdges(patches: readonly Patch[], diagonal: number): PatchEdges {
   const evaluator = new PatchEvaluator();
-  const local = new Float64Array(3);
+  const local = new Float64Array(9);
   const start = new Int32Array(4 * patches.length + 1);
   const lengths = new Float64Array(4 * patches.length);
   const points: number[] = [];
+  const outward: number[] = [];
   patches.forEach((patch, k) => {
     const [u0, u1, v0, v1] = patchDomain(patch);
-    const nu = SEGMENTS * Math.min(8, spanCount(patch.knotsU, patch.degreeU, patch.countU));
-    const nv = SEGMENTS * Math.min(8, spanCount(patch.knotsV, patch.degreeV, patch.countV));
+    const nu = segments(spanCount(patch.knotsU, patch.degreeU, patch.countU));
+    const nv = segments(spanCount(patch.knotsV, patch.degreeV, patch.countV));
     for (let e = 0; e < 4; e++) {
       const n = e < 2 ? nu : nv;
       for (let i = 0; i <= n; i++) {
         const s = i / n;
         const u = e < 2 ? u0 + s * (u1 - u0) : e === 2 ? u0 : u1;
         const v = e >= 2 ? v0 + s * (v1 - v0) : e === 0 ? v0 : v1;
-        evaluator.evaluate(local, patch, u, v, 0);
+        evaluator.evaluate(local, patch, u, v, 1);
+        outward.push(...across(local, e));
         points.push(local[0]!, local[1]!, local[2]!);
         if (i > 0) {
           const o = points.length - 6;
@@ -41,11 +46,28 @@ export function patchEdges(patches: readonly Patch[], diagonal: number): PatchEd
       if (lengths[4 * k + e]! < 1e-6 * diagonal) lengths[4 * k + e] = 0;
     }
   });
-  return { start, points: Float64Array.from(points), lengths };
+  return { start, points: Float64Array.from(points), outward: Float64Array.from(outward), lengths };
 }
 
-/** Distance from a point to the polyline of an edge, m. */
-export function distanceToEdge(edges: PatchEdges, edge: number, x: number, y: number, z: number): number {
+function segments(spans: number): number {
+  return Math.min(SEGMENTS.most, Math.max(SEGMENTS.least, SEGMENTS.perSpan * spans));
+}
+
+/** Unit direction away from the patch across edge e (0, 1: v ends; 2, 3: u ends), square to the edge. */
+function across(local: Float64Array, e: number): [number, number, number] {
+  const along = e < 2 ? 3 : 6;
+  const cross = e < 2 ? 6 : 3;
+  const side = e % 2 === 0 ? -1 : 1;
+  const l2 = local[along]! ** 2 + local[along + 1]! ** 2 + local[along + 2]! ** 2;
+  const dot = local[along]! * local[cross]! + local[along + 1]! * local[cross + 1]! + local[along + 2]! * local[cross + 2]!;
+  const share = l2 > 0 ? dot / l2 : 0;
+  const out = [0, 1, 2].map((d) => side * (local[cross + d]! - share * local[along + d]!));
+  const length = Math.hypot(out[0]!, out[1]!, out[2]!);
+  return length > 0 ? [out[0]! / length, out[1]! / length, out[2]! / length] : [0, 0, 0];
+}
+
+/** Nearest place of an edge's polyline into out[0..2], the number of its nearer end into out[3]; returns the distance, m. */
+export function nearestOnEdge(out: Float64Array, edges: PatchEdges, edge: number, x: number, y: number, z: number): number {
   const { points: p, start } = edges;
   let best = Infinity;
   for (let i = start[edge]!; i + 1 < start[edge + 1]!; i++) {
@@ -61,7 +83,14 @@ export function distanceToEdge(edges: PatchEdges, edge: number, x: number, y: nu
     const rx = ax - t * dx;
     const ry = ay - t * dy;
     const rz = az - t * dz;
-    best = Math.min(best, rx * rx + ry * ry + rz * rz);
+    const d2 = rx * rx + ry * ry + rz * rz;
+    if (d2 < best) {
+      best = d2;
+      out[0] = p[o]! + t * dx;
+      out[1] = p[o + 1]! + t * dy;
+      out[2] = p[o + 2]! + t * dz;
+      out[3] = t < 0.5 ? i : i + 1;
+    }
   }
   return Math.sqrt(best);
 }

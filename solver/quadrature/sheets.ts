@@ -9,7 +9,8 @@ import { patchPlaces } from './samples';
 /** Thickness proposed for a shell without an inside, as a share of the model's diagonal. */
 export const SHEET_THICKNESS = 0.01;
 
-const THIN = 0.03;
+/** A piece this thin for its area (mean chord over the root of the area) may be a sheet. */
+const THIN = 0.08;
 /** Inside a body that is closed but for gaps the winding number is near 1; next to a bare sheet it is near ½. */
 const FAINT = 0.58;
 const LOOKS = 150;
