@@ -34,7 +34,7 @@ export function patchFault(patch: Patch): string | null {
   if (countU <= degreeU || countV <= degreeV) return 'fewer control points than its degree needs';
   if (points.length !== 3 * countU * countV || weights.length !== countU * countV) return 'control points are missing';
   if (!points.every((x) => Math.abs(x) <= MAX_COORDINATE)) return 'a coordinate is not a usable number';
-  if (!weights.every((w) => w > 0 && w <= MAX_COORDINATE)) return 'a weight is not positive';
+  if (!weights.every((w) => w > 0 && w <= MAX_COORDINATE)) return 'a weight is not a positive number';
   for (const [knots, count, degree] of [
     [knotsU, countU, degreeU],
     [knotsV, countV, degreeV],

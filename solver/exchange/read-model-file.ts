@@ -3,6 +3,9 @@ import type { ImportResult } from './import-result';
 import { readStep } from './step-reader';
 import { UnreadableModelError } from './unreadable-model-error';
 
+/** The start section of IGES: letter S and a line number in the columns 73 to 80. */
+const IGES_START = /^[^\r\n]{72}S *1\s/;
+
 /**
  * Reads a model file; what it is is decided by its content, the name only helps the wording. Patches are in the
  * file's unit. Throws UnreadableModelError with a sentence for the person who brought it.
@@ -18,7 +21,10 @@ export function readModelFile(bytes: Uint8Array, fileName: string): ImportResult
   }
   const text = new TextDecoder('utf-8').decode(bytes);
   if (/^\s*(\/\*[\s\S]*?\*\/\s*)*ISO-10303-21/.test(head)) return readStep(text);
-  if (/^\s*\d+\s+\d+\s+\d+\s/.test(head)) return readBezierPatchText(text);
+  if (IGES_START.test(head)) {
+    throw new UnreadableModelError(`${quoted(fileName)} is an IGES file. Export the model as STEP with B-spline surfaces.`);
+  }
+  if (/^\s*\d+(\s+[-+.\d]|\s*$)/.test(head)) return readBezierPatchText(text);
   throw new UnreadableModelError(
     `${quoted(fileName)} is neither STEP nor Bézier-patch text. Export the model as STEP with B-spline surfaces.`,
   );

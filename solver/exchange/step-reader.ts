@@ -1,271 +1,142 @@
-import { flipPatch } from '../geometry/transform';
-import { clampedKnots } from '../geometry/shapes';
-import { MAX_DEGREE } from '../geometry/basis-functions';
-import { boundsOf } from '../geometry/tessellate';
+import { flipPatch, scalePatch } from '../geometry/transform';
 import type { Patch } from '../geometry/patch';
-import { MAX_PATCHES, MAX_POINTS_PER_PATCH, patchFault, type ImportResult } from './import-result';
-import { tokenizeStep, type StepFile, type StepInstance, type StepValue } from './step-tokenizer';
-import { listOf, recordOf, refOf, stepLengthUnit } from './step-units';
+import { MAX_PATCHES, patchFault, type ImportResult } from './import-result';
+import { occurrencesOf, type Occurrence } from './step-assembly';
+import { isTrimmed } from './step-faces';
+import { IDENTITY, isIdentity, placePatch } from './step-placement';
+import { isSpline, OTHER_SURFACES, readSplineSurface, SPLINE_TYPES } from './step-surface';
+import { tokenizeStep, type StepFile } from './step-tokenizer';
+import { fileUnit } from './step-units';
 import { UnreadableModelError } from './unreadable-model-error';
 
-/** Surfaces of ISO 10303-42 that are not B-splines, in plain words. */
-const OTHER_SURFACES: Record<string, string> = {
-  PLANE: 'plane',
-  CYLINDRICAL_SURFACE: 'cylinder',
-  CONICAL_SURFACE: 'cone',
-  SPHERICAL_SURFACE: 'sphere',
-  TOROIDAL_SURFACE: 'torus',
-  DEGENERATE_TOROIDAL_SURFACE: 'degenerate torus',
-  SURFACE_OF_REVOLUTION: 'surface of revolution',
-  SURFACE_OF_LINEAR_EXTRUSION: 'extruded surface',
-  OFFSET_SURFACE: 'offset surface',
-  CURVE_BOUNDED_SURFACE: 'curve-bounded surface',
-  RECTANGULAR_COMPOSITE_SURFACE: 'composite surface',
-};
-
-const SPLINE_TYPES = ['B_SPLINE_SURFACE_WITH_KNOTS', 'BEZIER_SURFACE', 'QUASI_UNIFORM_SURFACE', 'UNIFORM_SURFACE'];
+const SPLINE = 'B-spline surface';
 
 /**
- * B-spline surfaces of a STEP file (ISO 10303-42), loose or in faces, without their trims. Everything that is not
- * imported is counted with a reason, so declared = imported + skipped.
+ * B-spline surfaces of a STEP file (ISO 10303-42), loose or in faces, where the assembly places them and without their
+ * trims. Everything that is not imported is counted with a reason, so declared = imported + skipped; a surface that an
+ * assembly shows several times counts each time.
  */
 export function readStep(text: string): ImportResult {
   const file = tokenizeStep(text);
-  const faces = facesBySurface(file);
-  const groups = groupsOfFaces(file);
-  const skipped = new Map<string, { entity: string; count: number; reason: string }>();
-  const skip = (entity: string, reason: string) => {
-    const key = `${entity}|${reason}`;
-    const entry = skipped.get(key) ?? { entity, count: 0, reason };
-    entry.count++;
-    skipped.set(key, entry);
-  };
-  const patches: Patch[] = [];
-  let declared = 0;
-  let trimmed = 0;
-  for (const instance of file.instances.values()) {
-    const other = instance.records.find((record) => OTHER_SURFACES[record.type]);
-    if (other) {
-      declared++;
-      skip(OTHER_SURFACES[other.type]!, 'only B-spline surfaces are read');
-      continue;
-    }
-    if (!instance.records.some((record) => SPLINE_TYPES.includes(record.type))) continue;
-    declared++;
-    if (patches.length >= MAX_PATCHES) {
-      skip('B-spline surface', `more than ${MAX_PATCHES} patches`);
-      continue;
-    }
-    const surface = readSurface(file, instance);
-    const fault = typeof surface === 'string' ? surface : patchFault(surface);
-    if (typeof surface === 'string' || fault) {
-      skip('B-spline surface', fault!);
-      continue;
-    }
-    const face = faces.get(instance.id);
-    if (face) {
-      surface.name = face.name || surface.name;
-      surface.group = groups.get(face.id) ?? '';
-      if (isTrimmed(file, face, surface)) trimmed++;
-    } else surface.group = groups.get(instance.id) ?? '';
-    surface.name ||= `patch ${patches.length + 1}`;
-    patches.push(face?.reversed ? flipPatch(surface) : surface);
-  }
-  // A surface whose own line is damaged never became an instance; the text still tells that it was there.
-  const written = text.match(/\b(B_SPLINE_SURFACE_WITH_KNOTS|BEZIER_SURFACE|QUASI_UNIFORM_SURFACE|UNIFORM_SURFACE)\s*\(/g);
-  const parsed = [...file.instances.values()].filter((i) => i.records.some((r) => SPLINE_TYPES.includes(r.type))).length;
-  for (let lost = (written?.length ?? 0) - parsed; lost > 0; lost--) {
-    declared++;
-    skip('B-spline surface', 'its line in the file is damaged');
-  }
   if (file.instances.size === 0) {
     throw new UnreadableModelError('This STEP file holds no readable data. Ask for it again.');
   }
-  const list = [...skipped.values()];
-  if (patches.length === 0) {
-    const what = list.map((s) => `${s.count} × ${s.entity}: ${s.reason}`).join('; ');
-    throw new UnreadableModelError(
-      declared === 0
-        ? 'No surfaces were found in this STEP file. Export the model’s surfaces as B-splines and bring it again.'
-        : `None of the ${declared} surfaces in this STEP file can be used (${what}). Export them as B-splines and bring it again.`,
-    );
-  }
-  const remarks: string[] = [];
-  if (!file.complete) remarks.push(`The file stops before its end. ${patches.length} patches could be read.`);
-  if (file.damaged > 0) {
-    remarks.push(file.damaged === 1 ? 'One damaged line was passed over.' : `${file.damaged} damaged lines were passed over.`);
-  }
-  if (trimmed > 0) {
-    remarks.push(`${trimmed === 1 ? 'One face is' : `${trimmed} faces are`} trimmed in the file and shown whole here.`);
-  }
-  if ([...file.instances.values()].some((i) => recordOf(i, 'ITEM_DEFINED_TRANSFORMATION') || recordOf(i, 'MAPPED_ITEM'))) {
-    remarks.push('The file places pieces in an assembly. Their placements were left out.');
+  const skipped = new SkippedSurfaces();
+  countOtherSurfaces(file, skipped);
+  const unit = fileUnit(file);
+  const { occurrences, remarks } = occurrencesOf(file, unit?.metres ?? null);
+  const { patches, trimmed, otherUnits } = readPatches(file, withLoose(file, occurrences), unit?.metres ?? null, skipped);
+  const declared = patches.length + skipped.total;
+  if (patches.length === 0) throw nothingUsable(file, declared, skipped);
+  if (!file.complete) remarks.push(`The file stops before its end. ${plural(patches.length, 'patch', 'patches')} could be read.`);
+  if (file.damaged.length > 0) remarks.push(`${plural(file.damaged.length, 'damaged line was', 'damaged lines were')} passed over.`);
+  if (trimmed > 0) remarks.push(`${plural(trimmed, 'face is', 'faces are')} trimmed in the file and shown whole here.`);
+  if (otherUnits > 0) {
+    remarks.push(`${plural(otherUnits, 'patch is', 'patches are')} in another unit in the file and converted to ${unit!.name} here.`);
   }
   return {
     format: 'step',
     patches,
-    report: { declared, imported: patches.length, skipped: list, remarks, declaredUnit: stepLengthUnit(file) },
+    report: { declared, imported: patches.length, skipped: skipped.list(), remarks, declaredUnit: unit },
   };
 }
 
-/** The surface of one instance, or why it cannot be read. */
-function readSurface(file: StepFile, instance: StepInstance): Patch | string {
-  const complex = instance.records.length > 1;
-  const type = SPLINE_TYPES.find((t) => recordOf(instance, t))!;
-  const own = recordOf(instance, type)!.args;
-  const base = complex ? recordOf(instance, 'B_SPLINE_SURFACE')?.args : own.slice(1, 8);
-  const knotArgs = complex ? own : own.slice(8);
-  const name = complex ? recordOf(instance, 'REPRESENTATION_ITEM')?.args[0] : own[0];
-  if (!base) return 'its degrees are missing';
-  const [degreeU, degreeV] = [base[0], base[1]];
-  for (const degree of [degreeU, degreeV]) {
-    if (typeof degree !== 'number' || !Number.isInteger(degree) || degree < 1 || degree > MAX_DEGREE) {
-      return `degree ${typeof degree === 'number' ? degree : 'missing'}; 1 to ${MAX_DEGREE} can be read`;
-    }
+const plural = (count: number, one: string, many: string) => `${count} ${count === 1 ? one : many}`;
+
+class SkippedSurfaces {
+  total = 0;
+  private readonly entries = new Map<string, { entity: string; count: number; reason: string }>();
+
+  add(entity: string, reason: string): void {
+    const key = `${entity}|${reason}`;
+    const entry = this.entries.get(key) ?? { entity, count: 0, reason };
+    entry.count++;
+    this.total++;
+    this.entries.set(key, entry);
   }
-  const rows = listOf(base[2]).map(listOf);
-  const countU = rows.length;
-  const countV = rows[0]?.length ?? 0;
-  if (countU === 0 || countV === 0 || rows.some((row) => row.length !== countV)) return 'its control points are not a grid';
-  if (countU * countV > MAX_POINTS_PER_PATCH) return `more than ${MAX_POINTS_PER_PATCH} control points`;
-  const points = new Float64Array(3 * countU * countV);
-  let at = 0;
-  for (const row of rows) {
-    for (const item of row) {
-      const point = recordOf(file.instances.get(refOf(item) ?? -1), 'CARTESIAN_POINT');
-      const xyz = listOf(point?.args[1]);
-      if (!point || xyz.length === 0) return 'a control point is missing from the file';
-      for (let d = 0; d < 3; d++) points[at++] = typeof xyz[d] === 'number' ? (xyz[d] as number) : d < xyz.length ? NaN : 0;
-    }
+
+  list() {
+    return [...this.entries.values()];
   }
-  const knotsU = knotsFor(type, degreeU as number, countU, knotArgs[0], knotArgs[2]);
-  const knotsV = knotsFor(type, degreeV as number, countV, knotArgs[1], knotArgs[3]);
-  if (typeof knotsU === 'string') return knotsU;
-  if (typeof knotsV === 'string') return knotsV;
-  const weights = new Float64Array(countU * countV).fill(1);
-  const rational = recordOf(instance, 'RATIONAL_B_SPLINE_SURFACE');
-  if (rational) {
-    const values = listOf(rational.args[0]).flatMap(listOf);
-    if (values.length !== weights.length) return 'its weights do not fit its control points';
-    values.forEach((w, i) => (weights[i] = typeof w === 'number' ? w : NaN));
-  }
-  return {
-    name: typeof name === 'string' && name !== 'NONE' ? name.trim() : '',
-    group: '',
-    degreeU: degreeU as number,
-    degreeV: degreeV as number,
-    countU,
-    countV,
-    knotsU,
-    knotsV,
-    points,
-    weights,
-  };
 }
 
-/** Knots from multiplicities and values, or those that the surface's type implies (ISO 10303-42, 4.4.27–4.4.30). */
-function knotsFor(
-  type: string,
-  degree: number,
-  count: number,
-  multiplicities: StepValue | undefined,
-  values: StepValue | undefined,
-): Float64Array | string {
-  const length = count + degree + 1;
-  if (type === 'UNIFORM_SURFACE') return Float64Array.from({ length }, (_, i) => i - degree);
-  if (type === 'QUASI_UNIFORM_SURFACE') return Float64Array.from(clampedKnots(count, degree));
-  if (type === 'BEZIER_SURFACE') {
-    if ((count - 1) % degree !== 0) return 'its number of control points does not fit its degree';
-    const spans = (count - 1) / degree;
-    const knots: number[] = [0];
-    for (let s = 0; s <= spans; s++) for (let k = 0; k < degree; k++) knots.push(s);
-    knots.push(spans);
-    return Float64Array.from(knots);
-  }
-  const ms = listOf(multiplicities);
-  const ks = listOf(values);
-  if (ms.length === 0 || ms.length !== ks.length) return 'its knots are missing';
-  let total = 0;
-  for (const m of ms) {
-    if (typeof m !== 'number' || !Number.isInteger(m) || m < 1) return 'a knot’s multiplicity is not a whole number';
-    total += m;
-    if (total > length) return 'the number of knots does not fit';
-  }
-  if (total !== length) return 'the number of knots does not fit';
-  const knots = new Float64Array(length);
-  let at = 0;
-  for (let i = 0; i < ms.length; i++) {
-    const value = ks[i];
-    knots.fill(typeof value === 'number' ? value : NaN, at, at + (ms[i] as number));
-    at += ms[i] as number;
-  }
-  return knots;
-}
-
-interface Face {
-  id: number;
-  name: string;
-  reversed: boolean;
-  bounds: StepValue[];
-}
-
-function facesBySurface(file: StepFile): Map<number, Face> {
-  const faces = new Map<number, Face>();
+/** Surfaces of other kinds, and surfaces of any kind in lines that could not be read. */
+function countOtherSurfaces(file: StepFile, skipped: SkippedSurfaces): void {
   for (const instance of file.instances.values()) {
-    const record = recordOf(instance, 'ADVANCED_FACE') ?? recordOf(instance, 'FACE_SURFACE');
-    const surface = refOf(record?.args[2]);
-    if (!record || surface === null) continue;
-    const sense = record.args[3];
-    const name = typeof record.args[0] === 'string' && record.args[0] !== 'NONE' ? record.args[0].trim() : '';
-    const reversed = typeof sense === 'object' && sense !== null && 'enum' in sense && sense.enum === 'F';
-    faces.set(surface, { id: instance.id, name, reversed, bounds: listOf(record.args[1]) });
+    const other = instance.records.find((record) => OTHER_SURFACES[record.type]);
+    if (other) skipped.add(OTHER_SURFACES[other.type]!, 'only B-spline surfaces are read');
   }
-  return faces;
+  for (const types of file.damaged) {
+    for (const type of types) {
+      if (SPLINE_TYPES.includes(type)) skipped.add(SPLINE, 'its line in the file is damaged');
+      else if (OTHER_SURFACES[type]) skipped.add(OTHER_SURFACES[type]!, 'its line in the file is damaged');
+    }
+  }
 }
 
-/** Name of the solid, shell or set that each face or loose surface belongs to. */
-function groupsOfFaces(file: StepFile): Map<number, string> {
-  const groups = new Map<number, string>();
-  const nameShell = new Map<number, string>();
-  const text = (value: StepValue | undefined) => (typeof value === 'string' && value !== 'NONE' ? value.trim() : '');
+/** Adds the surfaces that no representation shows, in the order of the file. */
+function withLoose(file: StepFile, occurrences: Occurrence[]): Occurrence[] {
+  const shown = new Set(occurrences.map((o) => o.surface));
+  const all = [...occurrences];
   for (const instance of file.instances.values()) {
-    const solid = recordOf(instance, 'MANIFOLD_SOLID_BREP') ?? recordOf(instance, 'SHELL_BASED_SURFACE_MODEL');
-    if (!solid) continue;
-    for (const shell of [solid.args[1], ...listOf(solid.args[1])]) {
-      const id = refOf(shell);
-      if (id !== null && text(solid.args[0])) nameShell.set(id, text(solid.args[0]));
-    }
+    if (!isSpline(instance) || shown.has(instance.id)) continue;
+    all.push({ surface: instance.id, face: null, reversed: false, name: '', group: '', placement: IDENTITY, metres: null });
   }
-  for (const instance of file.instances.values()) {
-    for (const type of ['OPEN_SHELL', 'CLOSED_SHELL', 'GEOMETRIC_SET']) {
-      const record = recordOf(instance, type);
-      const name = nameShell.get(instance.id) ?? text(record?.args[0]);
-      if (record && name) for (const item of listOf(record.args[1])) groups.set(refOf(item) ?? -1, name);
-    }
-  }
-  return groups;
+  const order = new Map([...file.instances.keys()].map((id, k) => [id, k]));
+  return all.sort((a, b) => order.get(a.surface)! - order.get(b.surface)!);
 }
 
-/** Whether a face is cut: it has holes, or a vertex of its outline is away from the surface's corners. */
-function isTrimmed(file: StepFile, face: Face, patch: Patch): boolean {
-  if (face.bounds.length > 1) return true;
-  const bound = file.instances.get(refOf(face.bounds[0]) ?? -1);
-  const loop = recordOf(file.instances.get(refOf(bound?.records[0]?.args[1]) ?? -1), 'EDGE_LOOP');
-  const { countU, countV, points } = patch;
-  const corners = [0, countV - 1, (countU - 1) * countV, countU * countV - 1];
-  const reach = 1e-5 * boundsOf(points).diagonal;
-  for (const item of listOf(loop?.args[1])) {
-    const oriented = recordOf(file.instances.get(refOf(item) ?? -1), 'ORIENTED_EDGE');
-    const edge = recordOf(file.instances.get(refOf(oriented?.args[3]) ?? -1), 'EDGE_CURVE');
-    for (const end of [edge?.args[1], edge?.args[2]]) {
-      const vertex = recordOf(file.instances.get(refOf(end) ?? -1), 'VERTEX_POINT');
-      const xyz = listOf(recordOf(file.instances.get(refOf(vertex?.args[1]) ?? -1), 'CARTESIAN_POINT')?.args[1]);
-      if (xyz.length !== 3) continue;
-      const near = corners.some(
-        (c) => Math.hypot(...[0, 1, 2].map((d) => points[3 * c + d]! - Number(xyz[d]))) <= reach,
-      );
-      if (!near) return true;
+function readPatches(file: StepFile, occurrences: readonly Occurrence[], metres: number | null, skipped: SkippedSurfaces) {
+  const read = new Map<number, Patch | string>();
+  const patches: Patch[] = [];
+  let trimmed = 0;
+  let otherUnits = 0;
+  for (const occurrence of occurrences) {
+    if (patches.length >= MAX_PATCHES) {
+      skipped.add(SPLINE, `more than ${MAX_PATCHES} patches`);
+      continue;
     }
+    const { surface, face } = occurrence;
+    const known = read.get(surface) ?? readChecked(file, surface);
+    read.set(surface, known);
+    if (typeof known === 'string') {
+      skipped.add(SPLINE, known);
+      continue;
+    }
+    if (face !== null && isTrimmed(file, file.instances.get(face)!, known)) trimmed++;
+    let patch: Patch = { ...known, name: occurrence.name || known.name || `patch ${patches.length + 1}`, group: occurrence.group };
+    if (occurrence.metres !== null && metres !== null && occurrence.metres !== metres) {
+      patch = scalePatch(patch, occurrence.metres / metres);
+      otherUnits++;
+    }
+    if (!isIdentity(occurrence.placement)) patch = placePatch(patch, occurrence.placement);
+    patches.push(occurrence.reversed ? flipPatch(patch) : patch);
   }
-  return false;
+  return { patches, trimmed, otherUnits };
+}
+
+/** The surface of one instance, or why it cannot be used. */
+function readChecked(file: StepFile, id: number): Patch | string {
+  const surface = readSplineSurface(file, file.instances.get(id)!);
+  return typeof surface === 'string' ? surface : (patchFault(surface) ?? surface);
+}
+
+function nothingUsable(file: StepFile, declared: number, skipped: SkippedSurfaces): UnreadableModelError {
+  if (declared === 0) {
+    return new UnreadableModelError(
+      'No surfaces were found in this STEP file. Export the model’s surfaces as B-splines and bring it again.',
+    );
+  }
+  if (!file.complete) {
+    return new UnreadableModelError(
+      `This STEP file stops before its end, and none of its ${plural(declared, 'surface', 'surfaces')} is whole. Ask for it again.`,
+    );
+  }
+  const what = skipped
+    .list()
+    .slice(0, 4)
+    .map((s) => `${s.count} × ${s.entity}: ${s.reason}`)
+    .join('; ');
+  const which = declared === 1 ? 'The one surface in this STEP file cannot' : `None of the ${declared} surfaces in this STEP file can`;
+  return new UnreadableModelError(`${which} be used (${what}). Export the model as B-splines and bring it again.`);
 }

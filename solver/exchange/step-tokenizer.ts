@@ -21,17 +21,19 @@ export interface StepInstance {
 
 export interface StepFile {
   instances: Map<number, StepInstance>;
-  /** Instances whose text could not be understood. */
-  damaged: number;
+  /** Types named by the instances whose text could not be understood, or whose number was given twice. */
+  damaged: string[][];
   /** false: the file stops before its END-ISO line */
   complete: boolean;
 }
 
 const MAX_DEPTH = 64;
+/** A type with its opening parenthesis, as far as a damaged text shows it. */
+const TYPE = /[A-Z][A-Z0-9_]{3,}(?=\s*\()/g;
 
 export function tokenizeStep(text: string): StepFile {
   const instances = new Map<number, StepInstance>();
-  let damaged = 0;
+  const damaged: string[][] = [];
   const complete = text.includes('END-ISO-10303-21');
   const begin = text.indexOf('DATA;');
   let at = begin < 0 ? 0 : begin + 5;
@@ -47,14 +49,18 @@ export function tokenizeStep(text: string): StepFile {
     at = end + 1;
     if (text.charCodeAt(start) !== 35 /* # */) continue;
     const instance = parseInstance(text, start, end);
-    if (instance) {
+    if (instance && !instances.has(instance.id)) {
       instances.set(instance.id, instance);
       continue;
     }
-    damaged++;
+    let lost = end;
     readAgain -= end - start;
     const line = text.indexOf('\n#', start + 1);
-    if (readAgain > 0 && line > 0 && line < end) at = line + 1;
+    if (!instance && readAgain > 0 && line > 0 && line < end) {
+      lost = line;
+      at = line + 1;
+    }
+    damaged.push(text.slice(start, lost).match(TYPE) ?? []);
   }
   return { instances, damaged, complete };
 }

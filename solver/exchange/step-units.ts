@@ -1,39 +1,43 @@
-import type { StepFile, StepInstance, StepValue } from './step-tokenizer';
+import type { StepFile, StepInstance } from './step-tokenizer';
+import { listOf, nameOf, recordOf, refOf } from './step-values';
+
+export interface LengthUnit {
+  name: string;
+  metres: number;
+}
 
 const PREFIX: Record<string, number> = {
   EXA: 1e18, PETA: 1e15, TERA: 1e12, GIGA: 1e9, MEGA: 1e6, KILO: 1e3, HECTO: 1e2, DECA: 1e1,
   DECI: 1e-1, CENTI: 1e-2, MILLI: 1e-3, MICRO: 1e-6, NANO: 1e-9, PICO: 1e-12,
 }; // prettier-ignore
 
-const NAMES: Record<string, string> = { '0.001': 'mm', '0.01': 'cm', '1': 'm', '0.0254': 'inch', '0.3048': 'foot', '1000': 'km' };
-
-export const refOf = (value: StepValue | undefined): number | null =>
-  value !== null && typeof value === 'object' && !Array.isArray(value) && 'ref' in value ? value.ref : null;
-
-export const listOf = (value: StepValue | undefined): StepValue[] => (Array.isArray(value) ? value : []);
-
-export const recordOf = (instance: StepInstance | undefined, type: string) =>
-  instance?.records.find((record) => record.type === type);
+const NAMES: Record<string, string> = { '0.001': 'mm', '0.01': 'cm', '1': 'm', '0.0254': 'inch', '0.3048': 'foot', '0.9144': 'yard', '1000': 'km' };
 
 /**
- * The length unit of the file's geometric context (ISO 10303-41 SI_UNIT and CONVERSION_BASED_UNIT), in metres;
- * null when the file names none.
+ * The length unit of a representation context (ISO 10303-41 SI_UNIT and CONVERSION_BASED_UNIT), in metres; null when it
+ * names none that can be read.
  */
-export function stepLengthUnit(file: StepFile): { name: string; metres: number } | null {
-  const candidates: number[] = [];
+export function contextUnit(file: StepFile, context: StepInstance | undefined): LengthUnit | null {
+  const units = listOf(recordOf(context, 'GLOBAL_UNIT_ASSIGNED_CONTEXT')?.args.at(-1));
+  return firstLength(file, units.map(refOf));
+}
+
+/** The unit of the first context that has one, or else of any unit in the file. */
+export function fileUnit(file: StepFile): LengthUnit | null {
   for (const instance of file.instances.values()) {
-    const context = recordOf(instance, 'GLOBAL_UNIT_ASSIGNED_CONTEXT');
-    if (context) for (const item of listOf(context.args[context.args.length - 1])) candidates.push(refOf(item) ?? -1);
+    const unit = contextUnit(file, instance);
+    if (unit) return unit;
   }
-  for (const instance of file.instances.values()) candidates.push(instance.id);
-  for (const id of candidates) {
-    const metres = lengthIn(file, id, 0);
-    if (metres !== null) {
-      const instance = file.instances.get(id);
-      const conversion = recordOf(instance, 'CONVERSION_BASED_UNIT');
-      const own = typeof conversion?.args[0] === 'string' ? conversion.args[0].toLowerCase() : null;
-      return { name: NAMES[String(Number(metres.toPrecision(9)))] ?? own ?? `${metres} m`, metres };
-    }
+  return firstLength(file, file.instances.keys());
+}
+
+function firstLength(file: StepFile, ids: Iterable<number | null>): LengthUnit | null {
+  for (const id of ids) {
+    const metres = id === null ? null : lengthIn(file, id, 0);
+    if (id === null || metres === null) continue;
+    const conversion = recordOf(file.instances.get(id), 'CONVERSION_BASED_UNIT');
+    const own = nameOf(conversion?.args[0]).toLowerCase();
+    return { name: NAMES[String(Number(metres.toPrecision(9)))] ?? (own || `${metres} m`), metres };
   }
   return null;
 }
