@@ -4,7 +4,7 @@ import { readStep } from './step-reader';
 import { UnreadableModelError } from './unreadable-model-error';
 
 /** The start section of IGES: letter S and a line number in the columns 73 to 80. */
-const IGES_START = /^[^\r\n]{72}S *1\s/;
+const IGES_START = /^[^\r\n]{72}S[ 0]*1\s/;
 
 /**
  * Reads a model file; what it is is decided by its content, the name only helps the wording. Patches are in the

@@ -11,6 +11,11 @@ const SLOT = [
   [9, -1, -1],
 ] as const;
 
+/** How far towards the middle of the domain a normal is looked for, as shares of the way there. */
+const INSETS = [0, 1e-4, 1e-2];
+/** Area spanned by the tangents, as a share of their squares, below which they have no plane. */
+const PINCHED = 1e-8;
+
 /**
  * Evaluates points and derivatives of NURBS surfaces without allocating. One evaluator belongs to one caller.
  * Rational derivatives follow Piegl and Tiller (1997) eq. 4.20.
@@ -82,19 +87,23 @@ export class PatchEvaluator {
    * little inside the domain. Returns false, with a zero vector, where even that has no direction.
    */
   normal(out: Float64Array | Float32Array, at: number, patch: Patch, u: number, v: number): boolean {
-    const [u0, u1, v0, v1] = patchDomain(patch);
+    const u0 = patch.knotsU[patch.degreeU]!;
+    const u1 = patch.knotsU[patch.countU]!;
+    const v0 = patch.knotsV[patch.degreeV]!;
+    const v1 = patch.knotsV[patch.countV]!;
     const local = this.local;
-    for (const inset of [0, 1e-4, 1e-2]) {
-      const uu = u + inset * ((u0 + u1) / 2 - u);
-      const vv = v + inset * ((v0 + v1) / 2 - v);
+    for (let attempt = 0; attempt < INSETS.length; attempt++) {
+      const uu = u + INSETS[attempt]! * ((u0 + u1) / 2 - u);
+      const vv = v + INSETS[attempt]! * ((v0 + v1) / 2 - v);
       this.evaluate(local, patch, uu, vv, 1);
       const x = local[4]! * local[8]! - local[5]! * local[7]!;
       const y = local[5]! * local[6]! - local[3]! * local[8]!;
       const z = local[3]! * local[7]! - local[4]! * local[6]!;
       const l = Math.sqrt(x * x + y * y + z * z);
-      const a = Math.hypot(local[3]!, local[4]!, local[5]!);
-      const b = Math.hypot(local[6]!, local[7]!, local[8]!);
-      if (l > 1e-8 * (a * a + b * b)) {
+      // Both tangents over the whole range, so that neither the unit nor the parametrisation counts.
+      const a2 = (local[3]! ** 2 + local[4]! ** 2 + local[5]! ** 2) * (u1 - u0) ** 2;
+      const b2 = (local[6]! ** 2 + local[7]! ** 2 + local[8]! ** 2) * (v1 - v0) ** 2;
+      if (l * (u1 - u0) * (v1 - v0) > PINCHED * (a2 + b2)) {
         out[at] = x / l;
         out[at + 1] = y / l;
         out[at + 2] = z / l;

@@ -1,6 +1,9 @@
 import { EVALUATION_SIZE, patchDomain, PatchEvaluator } from './evaluate-patch';
 import type { Patch } from './patch';
 
+/** Side of a triangle, as a share of its patch's extent, that is rounding and not a length. */
+const PINCHED = 1e-12;
+
 /** Triangles over patches. Vertex arrays are parallel; lengths in the patches' unit. */
 export interface Tessellation {
   /** 3 · vertices */
@@ -24,18 +27,24 @@ export interface TessellationOptions {
   minCells?: number;
 }
 
-/**
- * Cells per direction of a regular grid whose chords keep within `chord` of the surface, from the largest second
- * derivatives: a cell of parameter size h misses at most h²/8 |S_uu| (Filip, Magedson and Markot 1986, eq. 2).
- */
-export function gridFor(patch: Patch, options: TessellationOptions, evaluator: PatchEvaluator): [number, number] {
-  const { chord, maxCells = 48, minCells = 1 } = options;
+/** How much a patch bends over its whole range: |second derivative| × range², at most; and its knot spans each way. */
+export interface PatchBend {
+  uu: number;
+  uv: number;
+  vv: number;
+  spansU: number;
+  spansV: number;
+}
+
+const SAMPLED_SPANS = 8;
+
+export function bendOf(patch: Patch, evaluator: PatchEvaluator): PatchBend {
   const [u0, u1, v0, v1] = patchDomain(patch);
   const local = new Float64Array(EVALUATION_SIZE);
   const spansU = spanCount(patch.knotsU, patch.degreeU, patch.countU);
   const spansV = spanCount(patch.knotsV, patch.degreeV, patch.countV);
-  const n = 2 * Math.min(8, spansU) + 1;
-  const m = 2 * Math.min(8, spansV) + 1;
+  const n = Math.max(2 * Math.min(SAMPLED_SPANS, spansU), patch.degreeU) + 1;
+  const m = Math.max(2 * Math.min(SAMPLED_SPANS, spansV), patch.degreeV) + 1;
   let uu = 0;
   let vv = 0;
   let uv = 0;
@@ -52,9 +61,22 @@ export function gridFor(patch: Patch, options: TessellationOptions, evaluator: P
   }
   const du = u1 - u0;
   const dv = v1 - v0;
-  const cells = (second: number, width: number, spans: number) =>
-    Math.min(maxCells, Math.max(spans * minCells, Math.ceil(width * Math.sqrt((second + (uv * du * dv) / (width * width) / 4) / (8 * chord)))));
-  return [Math.max(1, cells(uu, du, spansU)), Math.max(1, cells(vv, dv, spansV))];
+  return { uu: uu * du * du, uv: uv * du * dv, vv: vv * dv * dv, spansU, spansV };
+}
+
+/**
+ * Cells per direction of a regular grid whose chords keep within `chord` of the surface: n × m cells miss at most
+ * (|S_uu|/n² + 2|S_uv|/(n m) + |S_vv|/m²)/8 (Filip, Magedson and Markot 1986, eq. 2), the mixed part shared out evenly.
+ */
+export function cellsWithin(bend: PatchBend, options: TessellationOptions): [number, number] {
+  const { chord, maxCells = 48, minCells = 1 } = options;
+  const cells = (second: number, spans: number) =>
+    Math.max(1, Math.min(maxCells, Math.max(spans * minCells, Math.ceil(Math.sqrt((second + bend.uv / 4) / (8 * chord))))));
+  return [cells(bend.uu, bend.spansU), cells(bend.vv, bend.spansV)];
+}
+
+export function gridFor(patch: Patch, options: TessellationOptions, evaluator: PatchEvaluator): [number, number] {
+  return cellsWithin(bendOf(patch, evaluator), options);
 }
 
 /** Number of knot spans that are not empty. */
@@ -64,21 +86,33 @@ export function spanCount(knots: Float64Array, degree: number, count: number): n
   return Math.max(1, spans);
 }
 
-/** Parameters of `cells` + 1 grid lines: every knot is a line where there are cells enough, the rest spread evenly. */
+/**
+ * Parameters where the surface may have a crease across one direction, the ends of the domain included: knots whose
+ * multiplicity reaches the degree.
+ */
+export function creases(knots: Float64Array, degree: number, count: number): number[] {
+  const breaks = [knots[degree]!];
+  for (let i = degree + 1; i <= count; i++) {
+    const t = knots[i]!;
+    if (t > breaks[breaks.length - 1]! && (i === count || knots[i + degree - 1] === t)) breaks.push(t);
+  }
+  return breaks;
+}
+
+/** Parameters of `cells` + 1 grid lines: every crease is a line where there are cells enough, the rest spread evenly. */
 function gridLines(knots: Float64Array, degree: number, count: number, cells: number): Float64Array {
-  const breaks: number[] = [knots[degree]!];
-  for (let i = degree; i < count; i++) if (knots[i + 1]! > knots[i]!) breaks.push(knots[i + 1]!);
-  const spans = breaks.length - 1;
+  const breaks = creases(knots, degree, count);
+  const pieces = breaks.length - 1;
   const t0 = breaks[0]!;
-  const t1 = breaks[spans]!;
-  if (spans < 2 || cells < spans) return Float64Array.from({ length: cells + 1 }, (_, i) => t0 + ((t1 - t0) * i) / cells);
-  const lines: number[] = [t0];
-  let used = 0;
-  for (let s = 0; s < spans; s++) {
-    const share = s === spans - 1 ? cells - used : Math.max(1, Math.round((cells * (breaks[s + 1]! - t0)) / (t1 - t0)) - used);
-    const n = Math.max(1, Math.min(share, cells - used - (spans - 1 - s)));
-    for (let k = 1; k <= n; k++) lines.push(breaks[s]! + ((breaks[s + 1]! - breaks[s]!) * k) / n);
-    used += n;
+  const width = breaks[pieces]! - t0;
+  if (cells < pieces) return Float64Array.from({ length: cells + 1 }, (_, i) => t0 + (width * i) / cells);
+  const lines = [t0];
+  for (let s = 0; s < pieces; s++) {
+    const left = cells - (lines.length - 1) - (pieces - 1 - s);
+    const share = s === pieces - 1 ? left : Math.round((cells * (breaks[s + 1]! - t0)) / width) - (lines.length - 1);
+    const n = Math.max(1, Math.min(share, left));
+    for (let k = 1; k < n; k++) lines.push(breaks[s]! + ((breaks[s + 1]! - breaks[s]!) * k) / n);
+    lines.push(breaks[s + 1]!);
   }
   return Float64Array.from(lines);
 }
@@ -89,54 +123,10 @@ export function tessellate(patches: readonly Patch[], options: TessellationOptio
   return tessellateGrids(patches, patches.map((patch) => gridFor(patch, options, evaluator)), evaluator);
 }
 
-/**
- * Triangles for the screen: the finest chord whose vertices stay within `budget`, with cells no longer than about a
- * fortieth of the diagonal so that flat faces can bend. Deterministic for the same patches and budget.
- */
-export function tessellateForDisplay(patches: readonly Patch[], diagonal: number, budget: number): Tessellation {
-  const evaluator = new PatchEvaluator();
-  let chord = diagonal * 2e-5;
-  let reach = diagonal / 48;
-  for (;;) {
-    const grids = patches.map((patch): [number, number] => {
-      const [n, m] = gridFor(patch, { chord, maxCells: 160 }, evaluator);
-      const [u, v] = netLengths(patch);
-      return [Math.max(n, Math.ceil(u / reach)), Math.max(m, Math.ceil(v / reach))];
-    });
-    const vertices = grids.reduce((sum, [n, m]) => sum + (n + 1) * (m + 1), 0);
-    if (vertices <= budget || chord > diagonal) return tessellateGrids(patches, grids, evaluator);
-    chord *= Math.max(1.25, (vertices / budget) * 0.8);
-    reach *= 1.15;
-  }
-}
-
-/** Longest row of the control net along u and along v: an upper bound of the surface's extent each way. */
-function netLengths(patch: Patch): [number, number] {
-  const { countU, countV, points } = patch;
-  const step = (from: number, to: number) =>
-    Math.hypot(
-      points[3 * to]! - points[3 * from]!,
-      points[3 * to + 1]! - points[3 * from + 1]!,
-      points[3 * to + 2]! - points[3 * from + 2]!,
-    );
-  let u = 0;
-  let v = 0;
-  for (let j = 0; j < countV; j++) {
-    let sum = 0;
-    for (let i = 0; i + 1 < countU; i++) sum += step(i * countV + j, (i + 1) * countV + j);
-    u = Math.max(u, sum);
-  }
-  for (let i = 0; i < countU; i++) {
-    let sum = 0;
-    for (let j = 0; j + 1 < countV; j++) sum += step(i * countV + j, i * countV + j + 1);
-    v = Math.max(v, sum);
-  }
-  return [u, v];
-}
-
-function tessellateGrids(
+/** Triangles over all patches; patch k has grids[k] cells along u and v. */
+export function tessellateGrids(
   patches: readonly Patch[],
-  grids: readonly [number, number][],
+  grids: readonly (readonly [number, number])[],
   evaluator: PatchEvaluator,
 ): Tessellation {
   const lines = patches.map((patch, k) => [
@@ -165,21 +155,23 @@ function tessellateGrids(
       }
     }
     const m = vs.length;
+    const pinched = (PINCHED * boundsOf(patch.points).diagonal) ** 2;
     for (let i = 0; i + 1 < us.length; i++) {
       for (let j = 0; j + 1 < m; j++) {
         const a = first + i * m + j;
-        pushTriangle(triangles, positions, a, a + m, a + m + 1);
-        pushTriangle(triangles, positions, a, a + m + 1, a + 1);
+        pushTriangle(triangles, positions, pinched, a, a + m, a + m + 1);
+        pushTriangle(triangles, positions, pinched, a, a + m + 1, a + 1);
       }
     }
   });
   return { positions, normals, parameters, patch: patchOf, triangles: Uint32Array.from(triangles) };
 }
 
-function pushTriangle(triangles: number[], p: Float64Array, a: number, b: number, c: number): void {
-  const same = (i: number, j: number) =>
-    p[3 * i] === p[3 * j] && p[3 * i + 1] === p[3 * j + 1] && p[3 * i + 2] === p[3 * j + 2];
-  if (!same(a, b) && !same(b, c) && !same(c, a)) triangles.push(a, b, c);
+/** Leaves out triangles with a side no longer than the square root of `pinched`. */
+function pushTriangle(triangles: number[], p: Float64Array, pinched: number, a: number, b: number, c: number): void {
+  const apart = (i: number, j: number) =>
+    (p[3 * i]! - p[3 * j]!) ** 2 + (p[3 * i + 1]! - p[3 * j + 1]!) ** 2 + (p[3 * i + 2]! - p[3 * j + 2]!) ** 2 > pinched;
+  if (apart(a, b) && apart(b, c) && apart(c, a)) triangles.push(a, b, c);
 }
 
 /** Axis-aligned bounds of a list of points. */

@@ -1,5 +1,6 @@
+import { tessellateForDisplay } from '../geometry/display-mesh';
 import type { Patch } from '../geometry/patch';
-import { type Tessellation, tessellateForDisplay } from '../geometry/tessellate';
+import type { Tessellation } from '../geometry/tessellate';
 import type { BasisField } from '../weights/basis-field';
 import type { SurfaceMap } from './prepared';
 import { RowBuilder } from './rows';
