@@ -83,7 +83,7 @@ export class StraightWeights implements WeightField {
     out.count = n;
     const inverse = 1 / sum;
     for (let m = 0; m < n; m++) {
-      const w = out.weights[m]! * inverse;
+      const w = out.weights[m]! / sum;
       out.weights[m] = w;
       out.gradients[3 * m] = (out.gradients[3 * m]! - w * gx) * inverse;
       out.gradients[3 * m + 1] = (out.gradients[3 * m + 1]! - w * gy) * inverse;
