@@ -17,8 +17,7 @@ const MEGABYTE = 1024 * 1024;
 const WATCH_MILLISECONDS = 100;
 
 /** From the sources the child is TypeScript; in the bundle it lies beside main.js. */
-const FROM_SOURCE = __filename.endsWith('.ts');
-const CHILD = join(__dirname, FROM_SOURCE ? 'read-model.child.ts' : 'read-model.child.js');
+const CHILD = join(__dirname, __filename.endsWith('.ts') ? 'read-model.child.ts' : 'read-model.child.js');
 
 /** Resident bytes of a process, or 0 where the system does not tell (then the heap limit alone holds). */
 async function residentBytes(pid: number): Promise<number> {
@@ -51,8 +50,9 @@ export class ModelReader {
 
   private start(): ChildProcess {
     const { PATH, NODE_ENV, TZ } = process.env;
+    const register = this.child.endsWith('.ts') ? ['-r', '@swc-node/register'] : [];
     return fork(this.child, {
-      execArgv: [`--max-old-space-size=${this.limits.megabytes}`, ...(FROM_SOURCE ? ['-r', '@swc-node/register'] : [])],
+      execArgv: [`--max-old-space-size=${this.limits.megabytes}`, ...register],
       // No secrets: the child handles bytes from strangers.
       env: { PATH, NODE_ENV, TZ },
       serialization: 'advanced',
