@@ -1,76 +1,87 @@
 import type { BasisField } from '../weights/basis-field';
 import type { FinePoints } from './fine-points';
+import { momentBlock, monomialValues, MONOMIALS, shiftMatrix } from './monomials';
 import type { BlockPairs, BodyMatrices } from './prepared';
 
 /**
  * ∫ N Nᵀ dV and the stabilisation form of one body, from its fine points. With x = Σ N c,
  * Σ_i w_i |p_i c_i − x|² = Σ_i w_i |p_i c_i|² − |x|² because Σ w = 1: the block-diagonal
  * ∫ w_i p_i p_iᵀ minus the mass.
+ *
+ * A neighbour's polynomials are a shift of the part's own, p_j = T_ij p_i, so a pair needs only
+ * ∫ w_i w_j m dV for the monomials m of twice the degree (35 numbers instead of 100 products):
+ * the block is their matrix times T_ijᵀ.
  */
 export function bodyMatrices(fine: FinePoints, body: number, firstPart: number, partCount: number, field: BasisField): BodyMatrices {
-  const { basis } = field;
-  const size = basis * basis;
+  const { basis, parts } = field;
+  const width = MONOMIALS[basis];
   const pairOf = new Int32Array(partCount * partCount).fill(-1);
   const rows: number[] = [];
   const columns: number[] = [];
-  let values = new Float64Array(64 * size);
-  const diagonal = new Float64Array(partCount * size);
+  let moments = new Float64Array(64 * width);
+  const own = new Float64Array(partCount * width);
+  const monomials = new Float64Array(width);
   for (let k = 0; k < fine.count; k++) {
-    const n = field.evaluate(fine.positions[3 * k]!, fine.positions[3 * k + 1]!, fine.positions[3 * k + 2]!, body, false);
-    const { parts, weights } = field.sample;
-    const v = fine.volumes[k]!;
+    const x = fine.positions[3 * k]!;
+    const y = fine.positions[3 * k + 1]!;
+    const z = fine.positions[3 * k + 2]!;
+    const n = field.evaluateWeights(x, y, z, body);
+    const { parts: active, weights } = field.sample;
+    const volume = fine.volumes[k]!;
     for (let m = 0; m < n; m++) {
-      const i = parts[m]! - firstPart;
-      accumulate(diagonal, i * size, basis, v * weights[m]!, field.polynomials, m * basis, field.polynomials, m * basis);
+      const part = active[m]!;
+      const i = part - firstPart;
+      const inverse = 1 / parts.scales[part]!;
+      const wi = volume * weights[m]!;
+      monomialValues(
+        monomials,
+        basis,
+        (x - parts.centres[3 * part]!) * inverse,
+        (y - parts.centres[3 * part + 1]!) * inverse,
+        (z - parts.centres[3 * part + 2]!) * inverse,
+      );
+      for (let q = 0; q < width; q++) own[i * width + q]! += wi * monomials[q]!;
       for (let l = m; l < n; l++) {
-        const j = parts[l]! - firstPart;
-        let pair = pairOf[i * partCount + j]!;
+        const slot = i * partCount + active[l]! - firstPart;
+        let pair = pairOf[slot]!;
         if (pair < 0) {
           pair = rows.length;
-          pairOf[i * partCount + j] = pair;
-          rows.push(parts[m]!);
-          columns.push(parts[l]!);
-          if ((pair + 1) * size > values.length) {
-            const bigger = new Float64Array(2 * values.length);
-            bigger.set(values);
-            values = bigger;
+          pairOf[slot] = pair;
+          rows.push(part);
+          columns.push(active[l]!);
+          if ((pair + 1) * width > moments.length) {
+            const bigger = new Float64Array(2 * moments.length);
+            bigger.set(moments);
+            moments = bigger;
           }
         }
-        accumulate(values, pair * size, basis, v, field.values, m * basis, field.values, l * basis);
+        const w = wi * weights[l]!;
+        const o = pair * width;
+        for (let q = 0; q < width; q++) moments[o + q]! += w * monomials[q]!;
       }
     }
   }
-  const mass = sortPairs(rows, columns, values, size);
-  const stabilisation: BlockPairs = { rows: mass.rows.slice(), columns: mass.columns.slice(), values: mass.values.map((x) => -x) };
-  for (let p = 0; p < mass.rows.length; p++) {
-    if (mass.rows[p] !== mass.columns[p]) continue;
-    const from = (mass.rows[p]! - firstPart) * size;
-    for (let q = 0; q < size; q++) stabilisation.values[p * size + q]! += diagonal[from + q]!;
+
+  const order = rows.map((_, p) => p).sort((a, b) => rows[a]! - rows[b]! || columns[a]! - columns[b]!);
+  const size = basis * basis;
+  const mass: BlockPairs = {
+    rows: Int32Array.from(order, (p) => rows[p]!),
+    columns: Int32Array.from(order, (p) => columns[p]!),
+    values: new Float64Array(order.length * size),
+  };
+  const shift = new Float64Array(size);
+  order.forEach((p, n) => {
+    shiftMatrix(shift, parts, rows[p]!, columns[p]!);
+    momentBlock(mass.values, n * size, basis, moments, p * width, shift);
+  });
+  const stabilisation: BlockPairs = { rows: mass.rows.slice(), columns: mass.columns.slice(), values: mass.values.map((v) => -v) };
+  const block = new Float64Array(size);
+  for (let p = 0; p < order.length; p++) {
+    const part = mass.rows[p]!;
+    if (part !== mass.columns[p]) continue;
+    shiftMatrix(shift, parts, part, part);
+    momentBlock(block, 0, basis, own, (part - firstPart) * width, shift);
+    for (let q = 0; q < size; q++) stabilisation.values[p * size + q]! += block[q]!;
   }
   return { mass, stabilisation };
-}
-
-function accumulate(
-  out: Float64Array,
-  o: number,
-  basis: number,
-  scale: number,
-  left: Float64Array,
-  l: number,
-  right: Float64Array,
-  r: number,
-): void {
-  for (let a = 0; a < basis; a++) {
-    const s = scale * left[l + a]!;
-    const row = o + a * basis;
-    for (let b = 0; b < basis; b++) out[row + b]! += s * right[r + b]!;
-  }
-}
-
-/** Pairs in order of row, then column. */
-function sortPairs(rows: readonly number[], columns: readonly number[], values: Float64Array, size: number): BlockPairs {
-  const order = rows.map((_, p) => p).sort((a, b) => rows[a]! - rows[b]! || columns[a]! - columns[b]!);
-  const sorted = new Float64Array(order.length * size);
-  order.forEach((from, to) => sorted.set(values.subarray(from * size, (from + 1) * size), to * size));
-  return { rows: Int32Array.from(order, (p) => rows[p]!), columns: Int32Array.from(order, (p) => columns[p]!), values: sorted };
 }
