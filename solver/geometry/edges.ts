@@ -100,9 +100,10 @@ function judge(curve: Curve, candidates: readonly Curve[], tracer: EdgeTracer, t
   const samples = curve.parameters.length;
   const hits = new Map<Curve, number>();
   let widest = 0;
-  // Own edges can close a seam but cannot be the other side of a gap: a narrow strip is not a gap.
+  // The opposite side can close a seam but cannot be the other side of a gap: a narrow strip is not a gap.
   let widestOther = 0;
-  const near = [...candidates];
+  // The sides next to this one touch its ends and say nothing of the rest.
+  const near = candidates.filter((other) => other.patch !== patch || other.side === (side ^ 1));
   for (let i = 0; i < samples && widestOther <= reach; i++) {
     let best = Infinity;
     let bestOther = Infinity;

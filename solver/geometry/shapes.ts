@@ -55,6 +55,8 @@ const RING_KNOTS = [0, 0, 0, 0.25, 0.25, 0.5, 0.5, 0.75, 0.75, 1, 1, 1];
 
 /** A built-in shape as NURBS patches in the same unit, every patch facing outward. */
 export function shapePatches(shape: Shape): Patch[] {
+  const radius = 'radius' in shape ? shape.radius : 'minorRadius' in shape ? shape.minorRadius : null;
+  if (radius !== null && !(radius > 0)) throw new RangeError(`A ${shape.kind} needs a radius above 0, got ${radius}.`);
   switch (shape.kind) {
     case 'box':
       return boxPatches(shape.min, shape.max, shape.gap);

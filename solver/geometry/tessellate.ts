@@ -19,7 +19,7 @@ export interface Tessellation {
 }
 
 export interface TessellationOptions {
-  /** Largest distance between chord and surface aimed at, in the patches' unit. */
+  /** Largest distance between chord and surface aimed at along each direction, in the patches' unit; a triangle may miss twice that. */
   chord: number;
   /** Cells per patch direction, at most. */
   maxCells?: number;
@@ -66,7 +66,7 @@ export function bendOf(patch: Patch, evaluator: PatchEvaluator): PatchBend {
 
 /**
  * Cells per direction of a regular grid whose chords keep within `chord` of the surface: n × m cells miss at most
- * (|S_uu|/n² + 2|S_uv|/(n m) + |S_vv|/m²)/8 (Filip, Magedson and Markot 1986, eq. 2), the mixed part shared out evenly.
+ * (|S_uu|/n² + 2|S_uv|/(n m) + |S_vv|/m²)/8 (Filip, Magedson and Markot 1986, eq. 2); each direction is given one chord.
  */
 export function cellsWithin(bend: PatchBend, options: TessellationOptions): [number, number] {
   const { chord, maxCells = 48, minCells = 1 } = options;
