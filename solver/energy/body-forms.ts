@@ -2,13 +2,7 @@ import type { BlockPattern } from '../linear/block-pattern';
 import type { BlockPairs } from '../quadrature/prepared';
 
 /** out += factor · A x on each of the three components, for the symmetric scalar form A given in block pairs. */
-export function applyForm(
-  out: Float64Array,
-  form: BlockPairs,
-  basis: number,
-  x: Float64Array,
-  factor: number,
-): void {
+export function applyForm(out: Float64Array, form: BlockPairs, basis: number, x: Float64Array, factor: number): void {
   const { rows, columns, values } = form;
   for (let p = 0; p < rows.length; p++) {
     const block = p * basis * basis;
@@ -47,5 +41,15 @@ export function addForm(K: Float64Array, pattern: BlockPattern, form: BlockPairs
         }
       }
     }
+  }
+}
+
+/** K += factor · diag(d), d one number an unknown. */
+export function addDiagonal(K: Float64Array, pattern: BlockPattern, d: Float64Array, factor: number): void {
+  const { partCount, partAt, blockAt, size } = pattern;
+  for (let position = 0; position < partCount; position++) {
+    const at = blockAt[position * partCount + position]! * size * size;
+    const from = partAt[position]! * size;
+    for (let u = 0; u < size; u++) K[at + u * size + u]! += factor * d[from + u]!;
   }
 }

@@ -37,15 +37,32 @@ export function constraintGradient(constraint: Constraint, c: Float64Array, r: F
 }
 
 /** K += factor Σ k N Nᵀ on the held components. */
-export function constraintHessian(K: Float64Array, pattern: BlockPattern, constraint: Constraint, factor: number): void {
+export function constraintHessian(
+  K: Float64Array,
+  pattern: BlockPattern,
+  constraint: Constraint,
+  factor: number,
+): void {
   const { rows, stiffness, axes } = constraint;
   for (let k = 0; k < rows.count; k++) {
-    addRowProduct(K, pattern, rows, k, axes.map((held) => (held ? factor * stiffness[k]! : 0)));
+    addRowProduct(
+      K,
+      pattern,
+      rows,
+      k,
+      axes.map((held) => (held ? factor * stiffness[k]! : 0)),
+    );
   }
 }
 
 /** K += diag(s) ⊗ N Nᵀ for one row, s a component. */
-export function addRowProduct(K: Float64Array, pattern: BlockPattern, rows: BasisRows, row: number, s: readonly number[]): void {
+export function addRowProduct(
+  K: Float64Array,
+  pattern: BlockPattern,
+  rows: BasisRows,
+  row: number,
+  s: readonly number[],
+): void {
   const { basis, offsets, parts, values } = rows;
   const { position, blockAt, partCount, size } = pattern;
   for (let e = offsets[row]!; e < offsets[row + 1]!; e++) {

@@ -58,7 +58,9 @@ export class ElasticEnergy {
   setMaterials(materials: readonly SceneMaterial[]): void {
     const { bodies, points } = this.prepared;
     this.laws = bodies.map((body) => lawOf(materials[body.material]!.law));
-    this.lame = bodies.map((body) => lameOf(materials[body.material]!.youngsModulus, materials[body.material]!.poissonsRatio));
+    this.lame = bodies.map((body) =>
+      lameOf(materials[body.material]!.youngsModulus, materials[body.material]!.poissonsRatio),
+    );
     for (let k = 0; k < points.count; k++) this.shear[k] = points.volumes[k]! * this.lame[points.body[k]!]!.mu;
   }
 
@@ -134,7 +136,10 @@ export class ElasticEnergy {
 
   /** K += ∫ μ ∇N·∇N: the constant part of the Hessian, times `factor`. */
   addShear(K: Float64Array, factor: number): void {
-    this.kernels.assembleLaplace(K, this.shear.map((s) => s * factor));
+    this.kernels.assembleLaplace(
+      K,
+      this.shear.map((s) => s * factor),
+    );
   }
 
   /** Forgets predicted pressures: the next Hessian takes λθ of the last pose evaluated. */
@@ -232,7 +237,8 @@ export class ElasticEnergy {
         for (let m = points.activeStart[group]!, a = 0; m < points.activeStart[group + 1]!; m++) {
           const to = (points.activeParts[m]! * 3 + i) * basis;
           for (let b = 0; b < basis; b++, a++) {
-            const h = x * points.gradients[G + a]! + y * points.gradients[G + n + a]! + z * points.gradients[G + 2 * n + a]!;
+            const h =
+              x * points.gradients[G + a]! + y * points.gradients[G + n + a]! + z * points.gradients[G + 2 * n + a]!;
             D[to + b]! += m0 * h;
             D[length + to + b]! += m1 * h;
             D[2 * length + to + b]! += m2 * h;
@@ -278,7 +284,8 @@ export function dilatationParts(prepared: Prepared): Int32Array[] {
     const parts = new Set<number>();
     for (let e = dilatation.start[g]!; e < dilatation.start[g + 1]!; e++) {
       const group = groupOf[dilatation.points[e]!]!;
-      for (let m = points.activeStart[group]!; m < points.activeStart[group + 1]!; m++) parts.add(points.activeParts[m]!);
+      for (let m = points.activeStart[group]!; m < points.activeStart[group + 1]!; m++)
+        parts.add(points.activeParts[m]!);
     }
     return Int32Array.from([...parts].sort((a, b) => a - b));
   });

@@ -27,7 +27,8 @@ export class Loads {
       .map((load) => {
         const region = 'region' in load ? load.region : ({ kind: 'all' } as const);
         const chosen = samplesInRegion(samples, region, report.diagonal);
-        if (chosen.length === 0) throw new RangeError(`Load ${load.id} (${load.name}) touches no surface. Move its region onto the body.`);
+        if (chosen.length === 0)
+          throw new RangeError(`Load ${load.id} (${load.name}) touches no surface. Move its region onto the body.`);
         return { load, samples: chosen, area: chosen.reduce((sum, s) => sum + samples.areas[s]!, 0) };
       });
     this.gravity = gravityForce(prepared, scene);
@@ -117,6 +118,8 @@ function gravityForce(prepared: Prepared, scene: Scene): Float64Array {
   for (let part = 0; part < parts.count; part++) {
     for (let d = 0; d < 3; d++) uniform[(part * 3 + d) * basis] = total[d]!;
   }
-  bodies.forEach((body, b) => applyForm(force, matrices[b]!.mass, basis, uniform, scene.materials[body.material]!.density));
+  bodies.forEach((body, b) =>
+    applyForm(force, matrices[b]!.mass, basis, uniform, scene.materials[body.material]!.density),
+  );
   return force;
 }

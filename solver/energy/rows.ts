@@ -22,14 +22,7 @@ export function evaluateRow(out: Float64Array | number[], rows: BasisRows, r: nu
 }
 
 /** r += N (fx, fy, fz) on row `row`. */
-export function scatterRow(
-  r: Float64Array,
-  rows: BasisRows,
-  row: number,
-  fx: number,
-  fy: number,
-  fz: number,
-): void {
+export function scatterRow(r: Float64Array, rows: BasisRows, row: number, fx: number, fy: number, fz: number): void {
   const { basis, offsets, parts, values } = rows;
   for (let e = offsets[row]!; e < offsets[row + 1]!; e++) {
     const to = parts[e]! * 3 * basis;

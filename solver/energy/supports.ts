@@ -22,7 +22,9 @@ export function placeSupports(prepared: Prepared, scene: Scene): PlacedSupport[]
   return scene.supports.map((support) => {
     const chosen = samplesInRegion(samples, support.region, report.diagonal);
     if (chosen.length === 0) {
-      throw new RangeError(`Support ${support.id} (${support.name}) touches no surface. Move its region onto the body.`);
+      throw new RangeError(
+        `Support ${support.id} (${support.name}) touches no surface. Move its region onto the body.`,
+      );
     }
     const rest = new Float64Array(3 * chosen.length);
     const stiffness = new Float64Array(chosen.length);
@@ -54,7 +56,8 @@ export function placeSupports(prepared: Prepared, scene: Scene): PlacedSupport[]
 }
 
 /** β E/ℓ, Pa/m, with ℓ the cube root of the body's volume. */
-export const penaltyStiffness = (youngsModulus: number, volume: number) => (SUPPORT_FACTOR * youngsModulus) / Math.cbrt(volume);
+export const penaltyStiffness = (youngsModulus: number, volume: number) =>
+  (SUPPORT_FACTOR * youngsModulus) / Math.cbrt(volume);
 
 /** Moves the targets to where the support is at `time` (s); linear between keys, held outside their range. */
 export function carry(placed: PlacedSupport, time: number): void {

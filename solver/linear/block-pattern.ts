@@ -75,5 +75,14 @@ export function eliminate(graph: PartGraph, size: number): BlockPattern {
     }
     columnStart[column + 1] = rows.length;
   }
-  return { partCount: n, size, position, partAt, columnStart, rows: Int32Array.from(rows), blockAt, blockCount: rows.length };
+  return {
+    partCount: n,
+    size,
+    position,
+    partAt,
+    columnStart,
+    rows: Int32Array.from(rows),
+    blockAt,
+    blockCount: rows.length,
+  };
 }

@@ -22,7 +22,7 @@ export interface NewtonOptions {
   /** m */
   size: number;
   maxSteps: number;
-  /** 'every': a new factor each step; 'lagged': the factor is kept while steps shrink well. */
+  /** 'every': a new factor each step; 'lagged': the factor is kept while steps shrink well, then as 'every'. */
   factor: 'every' | 'lagged';
   /** Lagged only: whether a factor of an earlier call may be used first. */
   keepFactor: boolean;
@@ -39,24 +39,41 @@ export interface NewtonReport {
   changes: number[];
 }
 
+/** Full steps are trusted this often; a solve that needs more gets the line search. */
+const TRUSTED_STEPS = 15;
 const WORST_J = 0.02;
+/** A guess that squeezes the body further than this is not worth starting from. */
+const SAFE_GUESS_J = 0.3;
 /** A lagged factor is renewed when a step is not at least this much smaller than the one before. */
 const SLOW = 0.35;
 
-/** Minimises from c in place. r holds the gradient at the final c on return. */
-export function minimise(problem: NewtonProblem, c: Float64Array, r: Float64Array, options: NewtonOptions): NewtonReport {
+/**
+ * Minimises from c in place, beginning at `guess` instead when that is an allowed pose. r holds the gradient at the
+ * final c on return.
+ */
+export function minimise(
+  problem: NewtonProblem,
+  c: Float64Array,
+  r: Float64Array,
+  options: NewtonOptions,
+  guess?: Float64Array,
+): NewtonReport {
   const { tolerance, size, maxSteps } = options;
   const n = c.length;
   const delta = new Float64Array(n);
   const trial = new Float64Array(n);
   const trialGradient = new Float64Array(n);
-  let energy = problem.evaluate(c, r);
+  let energy = guess ? problem.evaluate(guess, r) : Infinity;
+  if (guess && Number.isFinite(energy) && problem.worstJ() > SAFE_GUESS_J) c.set(guess);
+  else energy = problem.evaluate(c, r);
   let fresh = !(options.factor === 'lagged' && options.keepFactor);
+  // Once a lagged factor has failed to shrink the steps, every step of this solve gets its own.
+  let every = options.factor === 'every';
   let factors = 0;
   let previous = Infinity;
   const changes: number[] = [];
   for (let step = 0; step < maxSteps; step++) {
-    const renewed = fresh || options.factor === 'every';
+    const renewed = fresh || every;
     if (renewed) {
       if (!problem.refresh(false) && !problem.refresh(true)) break;
       factors++;
@@ -74,7 +91,7 @@ export function minimise(problem: NewtonProblem, c: Float64Array, r: Float64Arra
     if (!Number.isFinite(change)) break;
     // A stale factor that does not help is renewed at the same pose.
     if (!renewed && (change > SLOW * previous || slope >= 0)) {
-      fresh = true;
+      every = true;
       previous = Infinity;
       continue;
     }
@@ -82,11 +99,11 @@ export function minimise(problem: NewtonProblem, c: Float64Array, r: Float64Arra
     const startJ = problem.worstJ();
     let s = 1;
     let taken = false;
-    for (let halving = 0; halving < 24; halving++, s /= 2) {
+    for (let halving = 0; halving < (renewed ? 24 : 1); halving++, s /= 2) {
       for (let u = 0; u < n; u++) trial[u] = c[u]! + s * delta[u]!;
       const e = problem.evaluate(trial, trialGradient);
       if (!Number.isFinite(e) || !(problem.worstJ() > Math.min(WORST_J, 0.5 * startJ))) continue;
-      const trusted = options.trustFullSteps && step < 15;
+      const trusted = renewed && options.trustFullSteps && step < TRUSTED_STEPS;
       if (trusted || e <= energy + 1e-4 * s * slope || norm(trialGradient) <= before || change < 1e-9) {
         energy = e;
         taken = true;
@@ -97,7 +114,7 @@ export function minimise(problem: NewtonProblem, c: Float64Array, r: Float64Arra
       // Put the problem's own record of the pose back to c before trying again or giving up.
       energy = problem.evaluate(c, r);
       if (renewed) return { converged: change < tolerance, steps: step, factors, change, changes };
-      fresh = true;
+      every = true;
       previous = Infinity;
       continue;
     }
@@ -106,6 +123,7 @@ export function minimise(problem: NewtonProblem, c: Float64Array, r: Float64Arra
     problem.stepped(delta, s);
     changes.push(change);
     previous = s < 1 ? Infinity : change;
+    if (s < 1) every = true;
     if (s === 1 && change <= tolerance) return { converged: true, steps: step + 1, factors, change, changes };
   }
   return { converged: false, steps: maxSteps, factors, change: changes[changes.length - 1] ?? Infinity, changes };

@@ -150,7 +150,8 @@ export class Simulation {
    */
   step(exact = false): StepReport {
     const { time } = this.scene;
-    if (time.kind !== 'motion') throw new SolverStopped('This scene is set to find its rest under load. Choose motion to step it.');
+    if (time.kind !== 'motion')
+      throw new SolverStopped('This scene is set to find its rest under load. Choose motion to step it.');
     const dt = 1 / (time.framesPerSecond * time.substeps);
     const before = this.saveState();
     try {
@@ -179,11 +180,17 @@ export class Simulation {
     const inertia = 1 / (beta * dt * dt);
     const start = c.slice();
     const predicted = new Float64Array(n);
-    for (let u = 0; u < n; u++) predicted[u] = c[u]! + dt * v[u]! + (hht ? dt * dt * (0.5 - beta) * a[u]! : 0);
+    // Backward Euler damps fast modes, so its velocity foretells the pose; HHT's still rings in them.
+    const guess = hht ? undefined : new Float64Array(n);
+    for (let u = 0; u < n; u++) {
+      predicted[u] = c[u]! + dt * v[u]! + (hht ? dt * dt * (0.5 - beta) * a[u]! : 0);
+      if (guess) guess[u] = predicted[u]!;
+    }
     this.setForces(this.time + dt, dt);
     const work = new Float64Array(n);
     const product = new Float64Array(n);
     const r = new Float64Array(n);
+    let first = true;
     const problem: NewtonProblem = {
       evaluate: (pose, gradient) => {
         const energy = potential.gradient(pose, gradient);
@@ -197,18 +204,28 @@ export class Simulation {
         return total;
       },
       worstJ: () => potential.elastic.worstJ(),
-      refresh: (definite) => this.refresh(c, 1 - alpha, inertia, definite),
+      refresh: (definite) => {
+        const ok = this.refresh(c, 1 - alpha, inertia, definite, first);
+        first = false;
+        return ok;
+      },
       solve: (x) => this.bound.solve(this.K, x),
-      stepped: () => undefined,
+      stepped: (delta, s) => potential.elastic.predictPressure(delta, s),
     };
-    const report = minimise(problem, c, r, {
-      tolerance: exact ? BAKE_TOLERANCE : LIVE_TOLERANCE,
-      size: this.prepared.report.diagonal,
-      maxSteps: 60,
-      factor: 'lagged',
-      keepFactor: this.factorFresh && !exact,
-      trustFullSteps: false,
-    });
+    const report = minimise(
+      problem,
+      c,
+      r,
+      {
+        tolerance: exact ? BAKE_TOLERANCE : LIVE_TOLERANCE,
+        size: this.prepared.report.diagonal,
+        maxSteps: 60,
+        factor: exact ? 'every' : 'lagged',
+        keepFactor: this.factorFresh && !exact,
+        trustFullSteps: true,
+      },
+      guess,
+    );
     this.factorFresh = report.converged;
     for (let u = 0; u < n; u++) {
       if (hht) {
@@ -238,7 +255,7 @@ export class Simulation {
     potential.addConstant(this.K, 1e-3 * dt * dt);
     this.constantFor = null;
     this.factorFresh = false;
-    for (let u = 0; u < a.length; u++) a[u] = -startGradient[u]!;
+    for (let u = 0; u < a.length; u++) a[u] = 0;
     if (this.bound.factor(this.K)) this.bound.solve(this.K, a);
     else a.fill(0);
     this.hasGradient = true;
@@ -254,8 +271,11 @@ export class Simulation {
     potential.ground?.lag(this.coefficients, dt);
   }
 
-  /** Factors stiffness · ∇²E + mass · M at the pose last evaluated. */
-  private refresh(c: Float64Array, stiffness: number, mass: number, definite: boolean): boolean {
+  /**
+   * Factors stiffness · ∇²E + mass · M at the pose last evaluated. The geometric term keeps the pressure that the last
+   * Newton step predicted, unless this is the `first` factor of a step.
+   */
+  private refresh(c: Float64Array, stiffness: number, mass: number, definite: boolean, first: boolean): boolean {
     const { potential, K, constant } = this;
     if (this.constantFor?.stiffness !== stiffness || this.constantFor.mass !== mass) {
       constant.fill(0);
@@ -264,7 +284,7 @@ export class Simulation {
       this.constantFor = { stiffness, mass };
     }
     K.set(constant);
-    potential.elastic.resetPressure();
+    if (first) potential.elastic.resetPressure();
     potential.addVarying(K, c, stiffness, definite);
     return this.bound.factor(K);
   }
@@ -291,7 +311,7 @@ export class Simulation {
         evaluate: (pose, gradient) => potential.gradient(pose, gradient),
         worstJ: () => potential.elastic.worstJ(),
         refresh: (definite) => {
-          const ok = this.refreshMixed(c, first, definite);
+          const ok = this.refresh(c, 1, 0, definite, first);
           first = false;
           return ok;
         },
@@ -323,20 +343,6 @@ export class Simulation {
     return { converged: true, newtonSteps, loadSteps, changes };
   }
 
-  /** As `refresh`, without mass; the geometric term keeps the pressure that the last Newton step predicted. */
-  private refreshMixed(c: Float64Array, first: boolean, definite: boolean): boolean {
-    const { potential, K, constant } = this;
-    if (this.constantFor?.stiffness !== 1 || this.constantFor.mass !== 0) {
-      constant.fill(0);
-      potential.addConstant(constant, 1);
-      this.constantFor = { stiffness: 1, mass: 0 };
-    }
-    K.set(constant);
-    if (first) potential.elastic.resetPressure();
-    potential.addVarying(K, c, 1, definite);
-    return this.bound.factor(K);
-  }
-
   /** Everything the next step depends on, as one array. */
   saveState(): Float64Array {
     const n = this.coefficients.length;
@@ -353,7 +359,8 @@ export class Simulation {
   /** Takes a state made by `saveState` of the same scene and parts; the next exact step gives the same bits. */
   restoreState(state: Float64Array): void {
     const n = this.coefficients.length;
-    if (state.length !== 2 + 4 * n) throw new RangeError(`This state has ${state.length} numbers; ${2 + 4 * n} were expected.`);
+    if (state.length !== 2 + 4 * n)
+      throw new RangeError(`This state has ${state.length} numbers; ${2 + 4 * n} were expected.`);
     this.time = state[0]!;
     this.hasGradient = state[1] === 1;
     this.coefficients.set(state.subarray(2, 2 + n));
@@ -412,7 +419,10 @@ function nearest(positions: ArrayLike<number>, point: Vec3): number {
   let best = 0;
   let least = Infinity;
   for (let s = 0; 3 * s < positions.length; s++) {
-    const d = (positions[3 * s]! - point[0]) ** 2 + (positions[3 * s + 1]! - point[1]) ** 2 + (positions[3 * s + 2]! - point[2]) ** 2;
+    const d =
+      (positions[3 * s]! - point[0]) ** 2 +
+      (positions[3 * s + 1]! - point[1]) ** 2 +
+      (positions[3 * s + 2]! - point[2]) ** 2;
     if (d < least) {
       least = d;
       best = s;

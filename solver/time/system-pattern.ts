@@ -6,7 +6,8 @@ import type { BasisRows, Prepared } from '../quadrature/prepared';
 export function systemPattern(prepared: Prepared): BlockPattern {
   const { parts, points, matrices, samples, ties } = prepared;
   const graph = new PartGraph(parts.count);
-  for (let g = 0; g < points.groupCount; g++) graph.join(points.activeParts, points.activeStart[g]!, points.activeStart[g + 1]!);
+  for (let g = 0; g < points.groupCount; g++)
+    graph.join(points.activeParts, points.activeStart[g]!, points.activeStart[g + 1]!);
   for (const list of dilatationParts(prepared)) graph.join(list);
   for (const { mass, stabilisation } of matrices) {
     for (const form of [mass, stabilisation]) {
