@@ -91,7 +91,10 @@ function subtractProduct(K: Float64Array, c: number, a: number, b: number, n: nu
       let s00 = 0, s01 = 0, s10 = 0, s11 = 0; // prettier-ignore
       for (let k = 0; k < n; k++, p++, q++) {
         const x0 = K[p]!, x1 = K[p + n]!, y0 = K[q]!, y1 = K[q + n]!; // prettier-ignore
-        s00 += x0 * y0; s01 += x0 * y1; s10 += x1 * y0; s11 += x1 * y1; // prettier-ignore
+        s00 += x0 * y0;
+        s01 += x0 * y1;
+        s10 += x1 * y0;
+        s11 += x1 * y1; // prettier-ignore
       }
       const to = c + i * n + j;
       K[to]! -= s00;

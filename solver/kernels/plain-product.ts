@@ -24,19 +24,43 @@ export function addTransposedProduct(
       for (let k = 0; k < rows; k++, p += n, q += n) {
         const x0 = A[p]!, x1 = A[p + 1]!, x2 = A[p + 2]!, x3 = A[p + 3]!; // prettier-ignore
         const y0 = B[q]!, y1 = B[q + 1]!, y2 = B[q + 2]!, y3 = B[q + 3]!; // prettier-ignore
-        s00 += x0 * y0; s01 += x0 * y1; s02 += x0 * y2; s03 += x0 * y3; // prettier-ignore
-        s10 += x1 * y0; s11 += x1 * y1; s12 += x1 * y2; s13 += x1 * y3; // prettier-ignore
-        s20 += x2 * y0; s21 += x2 * y1; s22 += x2 * y2; s23 += x2 * y3; // prettier-ignore
-        s30 += x3 * y0; s31 += x3 * y1; s32 += x3 * y2; s33 += x3 * y3; // prettier-ignore
+        s00 += x0 * y0;
+        s01 += x0 * y1;
+        s02 += x0 * y2;
+        s03 += x0 * y3; // prettier-ignore
+        s10 += x1 * y0;
+        s11 += x1 * y1;
+        s12 += x1 * y2;
+        s13 += x1 * y3; // prettier-ignore
+        s20 += x2 * y0;
+        s21 += x2 * y1;
+        s22 += x2 * y2;
+        s23 += x2 * y3; // prettier-ignore
+        s30 += x3 * y0;
+        s31 += x3 * y1;
+        s32 += x3 * y2;
+        s33 += x3 * y3; // prettier-ignore
       }
       let c = a * n + b;
-      C[c]! += s00; C[c + 1]! += s01; C[c + 2]! += s02; C[c + 3]! += s03; // prettier-ignore
+      C[c]! += s00;
+      C[c + 1]! += s01;
+      C[c + 2]! += s02;
+      C[c + 3]! += s03; // prettier-ignore
       c += n;
-      C[c]! += s10; C[c + 1]! += s11; C[c + 2]! += s12; C[c + 3]! += s13; // prettier-ignore
+      C[c]! += s10;
+      C[c + 1]! += s11;
+      C[c + 2]! += s12;
+      C[c + 3]! += s13; // prettier-ignore
       c += n;
-      C[c]! += s20; C[c + 1]! += s21; C[c + 2]! += s22; C[c + 3]! += s23; // prettier-ignore
+      C[c]! += s20;
+      C[c + 1]! += s21;
+      C[c + 2]! += s22;
+      C[c + 3]! += s23; // prettier-ignore
       c += n;
-      C[c]! += s30; C[c + 1]! += s31; C[c + 2]! += s32; C[c + 3]! += s33; // prettier-ignore
+      C[c]! += s30;
+      C[c + 1]! += s31;
+      C[c + 2]! += s32;
+      C[c + 3]! += s33; // prettier-ignore
     }
   }
 }

@@ -5,7 +5,10 @@ import { addTransposedProduct } from './plain-product';
 import type { BoundKernels, Kernels } from './kernels';
 
 /** The kernels in plain TypeScript, double precision, fixed order of summation. */
-export const plainKernels: Kernels = { name: 'plain', bind: (points, pattern, basis) => new PlainKernels(points, pattern, basis) };
+export const plainKernels: Kernels = {
+  name: 'plain',
+  bind: (points, pattern, basis) => new PlainKernels(points, pattern, basis),
+};
 
 /** Products are tiled by four: scratch rows are padded to a multiple of it. */
 const TILE = 4;

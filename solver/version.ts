@@ -1,0 +1,2 @@
+/** Changes whenever the same scene may give other numbers; kept with every run. */
+export const SOLVER_VERSION = '1.0.0';
