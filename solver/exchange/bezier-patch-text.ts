@@ -65,7 +65,7 @@ export function readBezierPatchText(text: string): ImportResult {
     patches.push(patch);
   }
   const remarks =
-    at < numbers.length ? [`The file goes on after its ${declared} patches; the rest was not read.`] : [];
+    at < numbers.length ? ['The file goes on after its last patch; the rest was not read.'] : [];
   return {
     format: 'bezier-patch-text',
     patches,

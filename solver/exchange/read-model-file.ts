@@ -3,6 +3,8 @@ import type { ImportResult } from './import-result';
 import { readStep } from './step-reader';
 import { UnreadableModelError } from './unreadable-model-error';
 
+/** Bytes or letters that tell what a file is. */
+const HEAD = 4096;
 /** The start section of IGES: letter S and a line number in the columns 73 to 80. */
 const IGES_START = /^[^\r\n]{72}S[ 0]*1\s/;
 
@@ -12,14 +14,15 @@ const IGES_START = /^[^\r\n]{72}S[ 0]*1\s/;
  */
 export function readModelFile(bytes: Uint8Array, fileName: string): ImportResult {
   if (bytes.length === 0) throw new UnreadableModelError('This file is empty. Ask for it again.');
-  const head = new TextDecoder('latin1').decode(bytes.subarray(0, 4096));
+  const first = new TextDecoder('latin1').decode(bytes.subarray(0, HEAD));
   // eslint-disable-next-line no-control-regex -- bytes that no text file holds tell a binary one
-  if (/[\x00-\x08\x0e-\x1f]/.test(head)) {
+  if (/[\x00-\x08\x0e-\x1f]/.test(first)) {
     throw new UnreadableModelError(
       `${quoted(fileName)} is not a text file. STEP files and Bézier-patch text can be read.`,
     );
   }
   const text = new TextDecoder('utf-8').decode(bytes);
+  const head = text.slice(0, HEAD);
   if (/^\s*(\/\*[\s\S]*?\*\/\s*)*ISO-10303-21/.test(head)) return readStep(text);
   if (IGES_START.test(head)) {
     throw new UnreadableModelError(`${quoted(fileName)} is an IGES file. Export the model as STEP with B-spline surfaces.`);

@@ -28,8 +28,7 @@ export interface StepFile {
 }
 
 const MAX_DEPTH = 64;
-/** A type with its opening parenthesis, as far as a damaged text shows it. */
-const TYPE = /[A-Z][A-Z0-9_]{3,}(?=\s*\()/g;
+const CAPITALS = /[A-Z][A-Z0-9_]*/g;
 
 export function tokenizeStep(text: string): StepFile {
   const instances = new Map<number, StepInstance>();
@@ -60,9 +59,19 @@ export function tokenizeStep(text: string): StepFile {
       lost = line;
       at = line + 1;
     }
-    damaged.push(text.slice(start, lost).match(TYPE) ?? []);
+    damaged.push(typesIn(text.slice(start, lost)));
   }
   return { instances, damaged, complete };
+}
+
+/** Words with an opening parenthesis after them: the types that a damaged text still shows. */
+function typesIn(text: string): string[] {
+  const types: string[] = [];
+  for (const word of text.matchAll(CAPITALS)) {
+    const after = word.index + word[0].length;
+    if (text[after] === '(' || text.slice(after, after + 8).trimStart().startsWith('(')) types.push(word[0]);
+  }
+  return types;
 }
 
 /** First position from `at` that is neither white space nor inside a comment. */
@@ -97,7 +106,6 @@ function endOfStatement(text: string, at: number): number {
   return length;
 }
 
-const ID = /#(\d{1,12})\s*=\s*/y;
 const WORD = /[A-Za-z_!][A-Za-z0-9_]*/y;
 const NUMBER = /[+-]?(?:\d+\.?\d*|\.\d+)(?:[Ee][+-]?\d+)?/y;
 const ENUM = /\.([A-Za-z0-9_]+)\./y;
@@ -109,9 +117,11 @@ function match(pattern: RegExp, text: string, at: number): RegExpExecArray | nul
 }
 
 function parseInstance(text: string, start: number, end: number): StepInstance | null {
-  const head = match(ID, text, start);
+  const head = match(REF, text, start);
   if (!head) return null;
-  let at = skipBlank(text, start + head[0].length);
+  const equals = skipBlank(text, start + head[0].length);
+  if (text[equals] !== '=') return null;
+  let at = skipBlank(text, equals + 1);
   const id = Number(head[1]);
   const records: { type: string; args: StepValue[] }[] = [];
   const isComplex = text[at] === '(';
