@@ -64,8 +64,7 @@ export function readBezierPatchText(text: string): ImportResult {
     if (fault) throw new UnreadableModelError(`Patch ${patches.length + 1} cannot be used: ${fault}. ${where()}`);
     patches.push(patch);
   }
-  const remarks =
-    at < numbers.length ? ['The file goes on after its last patch; the rest was not read.'] : [];
+  const remarks = at < numbers.length ? ['The file goes on after its last patch; the rest was not read.'] : [];
   return {
     format: 'bezier-patch-text',
     patches,
@@ -77,7 +76,11 @@ export function readBezierPatchText(text: string): ImportResult {
 export function writeBezierPatchText(patches: readonly Patch[]): string {
   const lines = [String(patches.length)];
   for (const patch of patches) {
-    if (patch.countU !== patch.degreeU + 1 || patch.countV !== patch.degreeV + 1 || patch.weights.some((w) => w !== 1)) {
+    if (
+      patch.countU !== patch.degreeU + 1 ||
+      patch.countV !== patch.degreeV + 1 ||
+      patch.weights.some((w) => w !== 1)
+    ) {
       throw new RangeError(`“${patch.name}” is not a single polynomial Bézier patch.`);
     }
     lines.push(`${patch.degreeU} ${patch.degreeV}`);

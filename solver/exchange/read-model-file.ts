@@ -25,7 +25,9 @@ export function readModelFile(bytes: Uint8Array, fileName: string): ImportResult
   const head = text.slice(0, HEAD);
   if (/^\s*(\/\*[\s\S]*?\*\/\s*)*ISO-10303-21/.test(head)) return readStep(text);
   if (IGES_START.test(head)) {
-    throw new UnreadableModelError(`${quoted(fileName)} is an IGES file. Export the model as STEP with B-spline surfaces.`);
+    throw new UnreadableModelError(
+      `${quoted(fileName)} is an IGES file. Export the model as STEP with B-spline surfaces.`,
+    );
   }
   if (/^\s*\d+(\s+[-+.\d]|\s*$)/.test(head)) return readBezierPatchText(text);
   throw new UnreadableModelError(

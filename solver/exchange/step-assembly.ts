@@ -50,9 +50,11 @@ export function occurrencesOf(file: StepFile, metres: number | null): { occurren
       break;
     }
     const group = products > 1 && node.product !== null ? productName(file, node.product) : '';
-    for (const use of node.uses) occurrences.push({ ...use, group: use.group || group, placement, metres: node.metres });
+    for (const use of node.uses)
+      occurrences.push({ ...use, group: use.group || group, placement, metres: node.metres });
     for (const child of node.children) {
-      if (path.includes(child.node) || path.length >= MAX_DEPTH) remarks.add('A piece that the file places inside itself was left out there.');
+      if (path.includes(child.node) || path.length >= MAX_DEPTH)
+        remarks.add('A piece that the file places inside itself was left out there.');
       else todo.push({ node: child.node, placement: compose(placement, child.placement), path: [...path, child.node] });
     }
   }
@@ -83,7 +85,8 @@ function representationNodes(file: StepFile): Map<number, Node> {
   }
   for (const instance of file.instances.values()) {
     if (instance.records.length !== 1) continue;
-    const record = recordOf(instance, 'SHAPE_REPRESENTATION_RELATIONSHIP') ?? recordOf(instance, 'REPRESENTATION_RELATIONSHIP');
+    const record =
+      recordOf(instance, 'SHAPE_REPRESENTATION_RELATIONSHIP') ?? recordOf(instance, 'REPRESENTATION_RELATIONSHIP');
     const a = mergedNode(nodes.get(refOf(record?.args[2]) ?? -1));
     const b = mergedNode(nodes.get(refOf(record?.args[3]) ?? -1));
     if (!a || !b || a === b) continue;
@@ -113,7 +116,12 @@ function mergedNode(node: Node | undefined): Node | undefined {
 }
 
 /** Child → parent by REPRESENTATION_RELATIONSHIP_WITH_TRANSFORMATION. */
-function linkRelationships(file: StepFile, nodes: Map<number, Node>, metres: number | null, remarks: Set<string>): void {
+function linkRelationships(
+  file: StepFile,
+  nodes: Map<number, Node>,
+  metres: number | null,
+  remarks: Set<string>,
+): void {
   const parentProduct = new Map<number, number | null>();
   for (const instance of file.instances.values()) {
     const record = recordOf(instance, 'CONTEXT_DEPENDENT_SHAPE_REPRESENTATION');
@@ -134,7 +142,12 @@ function linkRelationships(file: StepFile, nodes: Map<number, Node>, metres: num
     const swapped = parent !== undefined && parent !== null && parent === first.product && parent !== second.product;
     const [child, whole] = swapped ? [second, first] : [first, second];
     const [from, to] = swapped ? [3, 2] : [2, 3];
-    attach(whole, child, placementBetween(file, transformation?.args[from], transformation?.args[to], child, whole, metres), remarks);
+    attach(
+      whole,
+      child,
+      placementBetween(file, transformation?.args[from], transformation?.args[to], child, whole, metres),
+      remarks,
+    );
   }
 }
 
@@ -145,13 +158,15 @@ function linkMappedItems(file: StepFile, nodes: Map<number, Node>, metres: numbe
       const mapped = recordOf(file.instances.get(refOf(item) ?? -1), 'MAPPED_ITEM');
       const map = recordOf(file.instances.get(refOf(mapped?.args[1]) ?? -1), 'REPRESENTATION_MAP');
       const child = nodes.get(refOf(map?.args[1]) ?? -1);
-      if (whole && child) attach(whole, child, placementBetween(file, map!.args[0], mapped!.args[2], child, whole, metres), remarks);
+      if (whole && child)
+        attach(whole, child, placementBetween(file, map!.args[0], mapped!.args[2], child, whole, metres), remarks);
     }
   }
 }
 
 function attach(whole: Node, child: Node, placement: Placement | null, remarks: Set<string>): void {
-  if (!placement) remarks.add('The place of a piece in its assembly could not be read. The piece is shown where it was drawn.');
+  if (!placement)
+    remarks.add('The place of a piece in its assembly could not be read. The piece is shown where it was drawn.');
   whole.children.push({ node: child, placement: placement ?? IDENTITY });
   child.placed = true;
 }
@@ -169,7 +184,10 @@ function placementBetween(
   const b = axisPlacement(file, refOf(to));
   if (!a || !b) return null;
   const ratio = (own: number | null) => (own !== null && metres !== null ? own / metres : 1);
-  const placement = compose(scaledPlacement(b, ratio(whole.metres)), invertRigid(scaledPlacement(a, ratio(child.metres))));
+  const placement = compose(
+    scaledPlacement(b, ratio(whole.metres)),
+    invertRigid(scaledPlacement(a, ratio(child.metres))),
+  );
   // Frames that coincide give the identity, but for the last bit: keep such coordinates as the file has them.
   return placement.every((x, k) => Math.abs(x - IDENTITY[k]!) <= 1e-15) ? IDENTITY : placement;
 }

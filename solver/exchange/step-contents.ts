@@ -30,7 +30,11 @@ const CONTAINERS: Record<string, { members: number[]; orientation?: number }> = 
 };
 
 /** B-spline surfaces among the items of a representation, each once, with the names and the orientation they inherit. */
-export function surfacesIn(file: StepFile, items: readonly StepValue[], layers: ReadonlyMap<number, string>): SurfaceUse[] {
+export function surfacesIn(
+  file: StepFile,
+  items: readonly StepValue[],
+  layers: ReadonlyMap<number, string>,
+): SurfaceUse[] {
   const uses = new Map<number, SurfaceUse>();
   const seen = new Set<number>();
   const todo = items.map((item) => ({ id: refOf(item), group: '', reversed: false })).reverse();
@@ -67,7 +71,9 @@ export function surfacesIn(file: StepFile, items: readonly StepValue[], layers: 
       group: group || nameOf(record.args[0]) || layer,
       reversed: reversed !== (orientation !== undefined && isFalse(record.args[orientation])),
     };
-    const inside = members.flatMap((at) => (Array.isArray(record.args[at]) ? listOf(record.args[at]) : [record.args[at] ?? null]));
+    const inside = members.flatMap((at) =>
+      Array.isArray(record.args[at]) ? listOf(record.args[at]) : [record.args[at] ?? null],
+    );
     for (const member of inside.reverse()) todo.push({ id: refOf(member), ...inherited });
   }
   return [...uses.values()];
@@ -85,7 +91,9 @@ export function layersOf(file: StepFile): Map<number, string> {
 }
 
 /** Items of a representation (name, items, context), or null for other instances. */
-export function representationItems(instance: StepInstance): { items: StepValue[]; context: StepValue | undefined } | null {
+export function representationItems(
+  instance: StepInstance,
+): { items: StepValue[]; context: StepValue | undefined } | null {
   for (const { type, args } of instance.records) {
     if (type.endsWith('REPRESENTATION') && args.length === 3 && Array.isArray(args[1]) && refOf(args[2]) !== null) {
       return { items: args[1], context: args[2] };

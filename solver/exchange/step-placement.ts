@@ -36,7 +36,8 @@ export function invertRigid(p: Placement): Placement {
 export const isIdentity = (p: Placement): boolean => p.every((x, k) => x === IDENTITY[k]);
 
 /** Scales what is placed and where it is placed, for a file that mixes units. */
-export const scaledPlacement = (p: Placement, factor: number): Placement => p.map((x, k) => (k % 4 === 3 ? x * factor : x));
+export const scaledPlacement = (p: Placement, factor: number): Placement =>
+  p.map((x, k) => (k % 4 === 3 ? x * factor : x));
 
 /**
  * The frame of an AXIS2_PLACEMENT_3D (ISO 10303-42): z along its axis, x along its reference direction as far as that is
@@ -68,7 +69,10 @@ export function placePatch(patch: Patch, p: Placement): Patch {
   for (let k = 0; k < points.length; k += 3) {
     for (let r = 0; r < 3; r++) {
       points[k + r] =
-        p[4 * r]! * patch.points[k]! + p[4 * r + 1]! * patch.points[k + 1]! + p[4 * r + 2]! * patch.points[k + 2]! + p[4 * r + 3]!;
+        p[4 * r]! * patch.points[k]! +
+        p[4 * r + 1]! * patch.points[k + 1]! +
+        p[4 * r + 2]! * patch.points[k + 2]! +
+        p[4 * r + 3]!;
     }
   }
   return { ...patch, points };

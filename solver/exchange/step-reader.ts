@@ -25,14 +25,23 @@ export function readStep(text: string): ImportResult {
   countOtherSurfaces(file, skipped);
   const unit = fileUnit(file);
   const { occurrences, remarks } = occurrencesOf(file, unit?.metres ?? null);
-  const { patches, trimmed, otherUnits } = readPatches(file, withLoose(file, occurrences), unit?.metres ?? null, skipped);
+  const { patches, trimmed, otherUnits } = readPatches(
+    file,
+    withLoose(file, occurrences),
+    unit?.metres ?? null,
+    skipped,
+  );
   const declared = patches.length + skipped.total;
   if (patches.length === 0) throw nothingUsable(file, declared, skipped);
-  if (!file.complete) remarks.push(`The file stops before its end. ${plural(patches.length, 'patch', 'patches')} could be read.`);
-  if (file.damaged.length > 0) remarks.push(`${plural(file.damaged.length, 'damaged line was', 'damaged lines were')} passed over.`);
+  if (!file.complete)
+    remarks.push(`The file stops before its end. ${plural(patches.length, 'patch', 'patches')} could be read.`);
+  if (file.damaged.length > 0)
+    remarks.push(`${plural(file.damaged.length, 'damaged line was', 'damaged lines were')} passed over.`);
   if (trimmed > 0) remarks.push(`${plural(trimmed, 'face is', 'faces are')} trimmed in the file and shown whole here.`);
   if (otherUnits > 0) {
-    remarks.push(`${plural(otherUnits, 'patch is', 'patches are')} in another unit in the file and converted to ${unit!.name} here.`);
+    remarks.push(
+      `${plural(otherUnits, 'patch is', 'patches are')} in another unit in the file and converted to ${unit!.name} here.`,
+    );
   }
   return {
     format: 'step',
@@ -80,13 +89,26 @@ function withLoose(file: StepFile, occurrences: Occurrence[]): Occurrence[] {
   const all = [...occurrences];
   for (const instance of file.instances.values()) {
     if (!isSpline(instance) || shown.has(instance.id)) continue;
-    all.push({ surface: instance.id, face: null, reversed: false, name: '', group: '', placement: IDENTITY, metres: null });
+    all.push({
+      surface: instance.id,
+      face: null,
+      reversed: false,
+      name: '',
+      group: '',
+      placement: IDENTITY,
+      metres: null,
+    });
   }
   const order = new Map([...file.instances.keys()].map((id, k) => [id, k]));
   return all.sort((a, b) => order.get(a.surface)! - order.get(b.surface)!);
 }
 
-function readPatches(file: StepFile, occurrences: readonly Occurrence[], metres: number | null, skipped: SkippedSurfaces) {
+function readPatches(
+  file: StepFile,
+  occurrences: readonly Occurrence[],
+  metres: number | null,
+  skipped: SkippedSurfaces,
+) {
   const read = new Map<number, Patch | string>();
   const patches: Patch[] = [];
   let trimmed = 0;
@@ -104,7 +126,11 @@ function readPatches(file: StepFile, occurrences: readonly Occurrence[], metres:
       continue;
     }
     if (face !== null && isTrimmed(file, file.instances.get(face)!, known)) trimmed++;
-    let patch: Patch = { ...known, name: occurrence.name || known.name || `patch ${patches.length + 1}`, group: occurrence.group };
+    let patch: Patch = {
+      ...known,
+      name: occurrence.name || known.name || `patch ${patches.length + 1}`,
+      group: occurrence.group,
+    };
     if (occurrence.metres !== null && metres !== null && occurrence.metres !== metres) {
       patch = scalePatch(patch, occurrence.metres / metres);
       otherUnits++;
@@ -137,6 +163,9 @@ function nothingUsable(file: StepFile, declared: number, skipped: SkippedSurface
     .slice(0, 4)
     .map((s) => `${s.count} × ${s.entity}: ${s.reason}`)
     .join('; ');
-  const which = declared === 1 ? 'The one surface in this STEP file cannot' : `None of the ${declared} surfaces in this STEP file can`;
+  const which =
+    declared === 1
+      ? 'The one surface in this STEP file cannot'
+      : `None of the ${declared} surfaces in this STEP file can`;
   return new UnreadableModelError(`${which} be used (${what}). Export the model as B-splines and bring it again.`);
 }

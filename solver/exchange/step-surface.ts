@@ -5,7 +5,12 @@ import { MAX_POINTS_PER_PATCH } from './import-result';
 import type { StepFile, StepInstance, StepValue } from './step-tokenizer';
 import { listOf, nameOf, recordOf, refOf } from './step-values';
 
-export const SPLINE_TYPES = ['B_SPLINE_SURFACE_WITH_KNOTS', 'BEZIER_SURFACE', 'QUASI_UNIFORM_SURFACE', 'UNIFORM_SURFACE'];
+export const SPLINE_TYPES = [
+  'B_SPLINE_SURFACE_WITH_KNOTS',
+  'BEZIER_SURFACE',
+  'QUASI_UNIFORM_SURFACE',
+  'UNIFORM_SURFACE',
+];
 
 /** Surfaces of ISO 10303-42 that are not B-splines, in plain words. */
 export const OTHER_SURFACES: Record<string, string> = {
@@ -28,7 +33,8 @@ export const OTHER_SURFACES: Record<string, string> = {
   COMPLEX_TRIANGULATED_SURFACE_SET: 'triangle mesh',
 };
 
-export const isSpline = (instance: StepInstance): boolean => instance.records.some((record) => SPLINE_TYPES.includes(record.type));
+export const isSpline = (instance: StepInstance): boolean =>
+  instance.records.some((record) => SPLINE_TYPES.includes(record.type));
 
 /** The surface of one instance, or why it cannot be read. */
 export function readSplineSurface(file: StepFile, instance: StepInstance): Patch | string {
@@ -48,7 +54,8 @@ export function readSplineSurface(file: StepFile, instance: StepInstance): Patch
   const rows = listOf(base[2]).map(listOf);
   const countU = rows.length;
   const countV = rows[0]?.length ?? 0;
-  if (countU === 0 || countV === 0 || rows.some((row) => row.length !== countV)) return 'its control points are not a grid';
+  if (countU === 0 || countV === 0 || rows.some((row) => row.length !== countV))
+    return 'its control points are not a grid';
   if (countU * countV > MAX_POINTS_PER_PATCH) return `more than ${MAX_POINTS_PER_PATCH} control points`;
   const points = new Float64Array(3 * countU * countV);
   let at = 0;
@@ -57,7 +64,8 @@ export function readSplineSurface(file: StepFile, instance: StepInstance): Patch
       const point = recordOf(file.instances.get(refOf(item) ?? -1), 'CARTESIAN_POINT');
       const xyz = listOf(point?.args[1]);
       if (!point || xyz.length === 0) return 'a control point is missing from the file';
-      for (let d = 0; d < 3; d++) points[at++] = typeof xyz[d] === 'number' ? (xyz[d] as number) : d < xyz.length ? NaN : 0;
+      for (let d = 0; d < 3; d++)
+        points[at++] = typeof xyz[d] === 'number' ? (xyz[d] as number) : d < xyz.length ? NaN : 0;
     }
   }
   const knotsU = knotsFor(type, degreeU as number, countU, knotArgs[0], knotArgs[2]);

@@ -69,7 +69,14 @@ function typesIn(text: string): string[] {
   const types: string[] = [];
   for (const word of text.matchAll(CAPITALS)) {
     const after = word.index + word[0].length;
-    if (text[after] === '(' || text.slice(after, after + 8).trimStart().startsWith('(')) types.push(word[0]);
+    if (
+      text[after] === '(' ||
+      text
+        .slice(after, after + 8)
+        .trimStart()
+        .startsWith('(')
+    )
+      types.push(word[0]);
   }
   return types;
 }

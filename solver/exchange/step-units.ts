@@ -11,7 +11,16 @@ const PREFIX: Record<string, number> = {
   DECI: 1e-1, CENTI: 1e-2, MILLI: 1e-3, MICRO: 1e-6, NANO: 1e-9, PICO: 1e-12,
 }; // prettier-ignore
 
-const NAMES: Record<string, string> = { '0.000001': 'µm', '0.001': 'mm', '0.01': 'cm', '1': 'm', '0.0254': 'inch', '0.3048': 'foot', '0.9144': 'yard', '1000': 'km' };
+const NAMES: Record<string, string> = {
+  '0.000001': 'µm',
+  '0.001': 'mm',
+  '0.01': 'cm',
+  '1': 'm',
+  '0.0254': 'inch',
+  '0.3048': 'foot',
+  '0.9144': 'yard',
+  '1000': 'km',
+};
 
 /**
  * The length unit of a representation context (ISO 10303-41 SI_UNIT and CONVERSION_BASED_UNIT), in metres; null when it

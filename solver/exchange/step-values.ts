@@ -16,7 +16,10 @@ export const isFalse = (value: StepValue | undefined): boolean =>
   value !== null && typeof value === 'object' && !Array.isArray(value) && 'enum' in value && value.enum === 'F';
 
 /** The three coordinates of a CARTESIAN_POINT or DIRECTION; missing ones are 0, unreadable ones NaN; null when there is none. */
-export function tripleOf(instance: StepInstance | undefined, type: 'CARTESIAN_POINT' | 'DIRECTION'): [number, number, number] | null {
+export function tripleOf(
+  instance: StepInstance | undefined,
+  type: 'CARTESIAN_POINT' | 'DIRECTION',
+): [number, number, number] | null {
   const values = listOf(recordOf(instance, type)?.args[1]);
   if (values.length === 0) return null;
   const at = (d: number) => (d >= values.length ? 0 : typeof values[d] === 'number' ? (values[d] as number) : NaN);

@@ -99,7 +99,9 @@ function encodeString(s: string): string {
     .replace(/\\/g, '\\\\')
     .replace(/'/g, "''")
     .replace(/[^\x20-\x7e]+/g, (run) => {
-      const hex = Array.from({ length: run.length }, (_, i) => run.charCodeAt(i).toString(16).toUpperCase().padStart(4, '0'));
+      const hex = Array.from({ length: run.length }, (_, i) =>
+        run.charCodeAt(i).toString(16).toUpperCase().padStart(4, '0'),
+      );
       return `\\X2\\${hex.join('')}\\X0\\`;
     });
 }

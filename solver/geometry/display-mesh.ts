@@ -137,7 +137,10 @@ function closeSeams(
     const crossed = distance(onA[0]!, onB[last]!) + distance(onA[last]!, onB[0]!);
     const middle = last >> 1;
     // A closed edge starts where it ends: ask a point beside the middle.
-    const turned = straight === crossed ? distance(onA[middle]!, onB[middle]!) > distance(onA[middle]!, onB[last - middle]!) : straight > crossed;
+    const turned =
+      straight === crossed
+        ? distance(onA[middle]!, onB[middle]!) > distance(onA[middle]!, onB[last - middle]!)
+        : straight > crossed;
     if (turned) onB.reverse();
     // Curves that run at different speeds do not pair up: moving such vertices would fold the mesh.
     let spacing = Infinity;

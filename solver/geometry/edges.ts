@@ -111,7 +111,13 @@ function judge(curve: Curve, candidates: readonly Curve[], tracer: EdgeTracer, t
     for (const other of near) {
       if (best <= EXACT * tolerance.joined) break;
       const limit = other.patch === patch ? best : Math.max(best, bestOther);
-      const d = tracer.distance(curve.points, 3 * i, other, Math.min(limit, 2 * tolerance.reach), EXACT * tolerance.joined);
+      const d = tracer.distance(
+        curve.points,
+        3 * i,
+        other,
+        Math.min(limit, 2 * tolerance.reach),
+        EXACT * tolerance.joined,
+      );
       if (d < best) {
         best = d;
         nearest = other;

@@ -73,7 +73,8 @@ function boxPatches(min: Vec3, max: Vec3, gap: number): Patch[] {
   const patches: Patch[] = [];
   const names = ['x', 'y', 'z'];
   for (let d = 0; d < 3; d++) {
-    if (!(max[d]! > min[d]!)) throw new RangeError(`A box needs min < max along ${names[d]}, got ${min[d]} and ${max[d]}.`);
+    if (!(max[d]! > min[d]!))
+      throw new RangeError(`A box needs min < max along ${names[d]}, got ${min[d]} and ${max[d]}.`);
     const a = (d + 1) % 3;
     const b = (d + 2) % 3;
     if (!(2 * gap < max[a]! - min[a]!) || !(2 * gap < max[b]! - min[b]!)) {

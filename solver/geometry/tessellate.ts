@@ -71,7 +71,10 @@ export function bendOf(patch: Patch, evaluator: PatchEvaluator): PatchBend {
 export function cellsWithin(bend: PatchBend, options: TessellationOptions): [number, number] {
   const { chord, maxCells = 48, minCells = 1 } = options;
   const cells = (second: number, spans: number) =>
-    Math.max(1, Math.min(maxCells, Math.max(spans * minCells, Math.ceil(Math.sqrt((second + bend.uv / 4) / (8 * chord))))));
+    Math.max(
+      1,
+      Math.min(maxCells, Math.max(spans * minCells, Math.ceil(Math.sqrt((second + bend.uv / 4) / (8 * chord))))),
+    );
   return [cells(bend.uu, bend.spansU), cells(bend.vv, bend.spansV)];
 }
 
@@ -120,7 +123,11 @@ function gridLines(knots: Float64Array, degree: number, count: number, cells: nu
 /** Triangles over all patches, each on its own regular grid. */
 export function tessellate(patches: readonly Patch[], options: TessellationOptions): Tessellation {
   const evaluator = new PatchEvaluator();
-  return tessellateGrids(patches, patches.map((patch) => gridFor(patch, options, evaluator)), evaluator);
+  return tessellateGrids(
+    patches,
+    patches.map((patch) => gridFor(patch, options, evaluator)),
+    evaluator,
+  );
 }
 
 /** Triangles over all patches; patch k has grids[k] cells along u and v. */
@@ -170,12 +177,17 @@ export function tessellateGrids(
 /** Leaves out triangles with a side no longer than the square root of `pinched`. */
 function pushTriangle(triangles: number[], p: Float64Array, pinched: number, a: number, b: number, c: number): void {
   const apart = (i: number, j: number) =>
-    (p[3 * i]! - p[3 * j]!) ** 2 + (p[3 * i + 1]! - p[3 * j + 1]!) ** 2 + (p[3 * i + 2]! - p[3 * j + 2]!) ** 2 > pinched;
+    (p[3 * i]! - p[3 * j]!) ** 2 + (p[3 * i + 1]! - p[3 * j + 1]!) ** 2 + (p[3 * i + 2]! - p[3 * j + 2]!) ** 2 >
+    pinched;
   if (apart(a, b) && apart(b, c) && apart(c, a)) triangles.push(a, b, c);
 }
 
 /** Axis-aligned bounds of a list of points. */
-export function boundsOf(points: ArrayLike<number>): { min: [number, number, number]; max: [number, number, number]; diagonal: number } {
+export function boundsOf(points: ArrayLike<number>): {
+  min: [number, number, number];
+  max: [number, number, number];
+  diagonal: number;
+} {
   const min: [number, number, number] = [Infinity, Infinity, Infinity];
   const max: [number, number, number] = [-Infinity, -Infinity, -Infinity];
   for (let i = 0; i < points.length; i += 3) {

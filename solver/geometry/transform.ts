@@ -19,5 +19,10 @@ export function flipPatch(patch: Patch): Patch {
     }
   }
   const ends = knotsV[0]! + knotsV[knotsV.length - 1]!;
-  return { ...patch, points: turnedPoints, weights: turnedWeights, knotsV: knotsV.map((_, i) => ends - knotsV[knotsV.length - 1 - i]!) };
+  return {
+    ...patch,
+    points: turnedPoints,
+    weights: turnedWeights,
+    knotsV: knotsV.map((_, i) => ends - knotsV[knotsV.length - 1 - i]!),
+  };
 }

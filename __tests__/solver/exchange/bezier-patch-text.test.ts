@@ -44,7 +44,10 @@ test('the smallest file, read point by point', () => {
 
 test('what is written reads back to the same bits (seed 21)', () => {
   const random = seededRandom(21);
-  const patches = Array.from({ length: 12 }, (_, k) => ({ ...bezier(random, 1 + (k % 5), 1 + (k % 4)), name: `patch ${k + 1}` }));
+  const patches = Array.from({ length: 12 }, (_, k) => ({
+    ...bezier(random, 1 + (k % 5), 1 + (k % 4)),
+    name: `patch ${k + 1}`,
+  }));
   const read = readBezierPatchText(writeBezierPatchText(patches));
   expect(read.patches).toEqual(patches.map((patch) => ({ ...patch })));
 });
@@ -60,7 +63,9 @@ test('teapot: 32 bicubic patches, 306 places (F. Crow, IEEE CG&A 7(1) 1987: valu
   const { patches, report } = readBezierPatchText(text);
   expect(report).toMatchObject({ declared: 32, imported: 32, skipped: [], remarks: [] });
   expect(patches.every((p) => p.degreeU === 3 && p.degreeV === 3)).toBe(true);
-  const places = new Set(patches.flatMap((p) => Array.from({ length: 16 }, (_, k) => p.points.subarray(3 * k, 3 * k + 3).join(' '))));
+  const places = new Set(
+    patches.flatMap((p) => Array.from({ length: 16 }, (_, k) => p.points.subarray(3 * k, 3 * k + 3).join(' '))),
+  );
   // The sample repeats few places in other words: −0 and 0 are one place.
   expect(places.size).toBeLessThanOrEqual(306);
   expect(places.size).toBeGreaterThan(280);
@@ -70,12 +75,20 @@ describe('a file that cannot be read says where it stops', () => {
   const teapotLike = writeBezierPatchText(Array.from({ length: 14 }, (_, k) => bezier(seededRandom(k), 3, 3)));
 
   test('truncated', () => {
-    const end = teapotLike.split('\n').slice(0, 1 + 13 * 17 + 6).join('\n');
-    expect(message(end)).toBe('This file ends in the middle of patch 14. 13 patches could be read. Ask for the file again.');
+    const end = teapotLike
+      .split('\n')
+      .slice(0, 1 + 13 * 17 + 6)
+      .join('\n');
+    expect(message(end)).toBe(
+      'This file ends in the middle of patch 14. 13 patches could be read. Ask for the file again.',
+    );
   });
 
   test.each([
-    [LINE.replace('1 0 0', '1 x 0'), 'Patch 1 has “x” where a number belongs. 0 patches could be read. Ask for the file again.'],
+    [
+      LINE.replace('1 0 0', '1 x 0'),
+      'Patch 1 has “x” where a number belongs. 0 patches could be read. Ask for the file again.',
+    ],
     [LINE.replace('1 0 0', '1 NaN 0'), 'Patch 1 has “NaN” where a number belongs.'],
     [LINE.replace('1 0 0', '1 Infinity 0'), 'Patch 1 has “Infinity” where a number belongs.'],
     [LINE.replace('1 0 0', '1 1e400 0'), 'Patch 1 has “1e400” where a number belongs.'],
@@ -99,5 +112,7 @@ test('text after the last patch is mentioned and not read', () => {
 test('only single polynomial patches can be written', () => {
   const random = seededRandom(2);
   expect(() => writeBezierPatchText([randomPatch(random, 3, 3, 4, 4)])).toThrow(RangeError);
-  expect(() => writeBezierPatchText([{ ...randomPatch(random, 2, 2, 5, 3), weights: new Float64Array(15).fill(1) }])).toThrow(RangeError);
+  expect(() =>
+    writeBezierPatchText([{ ...randomPatch(random, 2, 2, 5, 3), weights: new Float64Array(15).fill(1) }]),
+  ).toThrow(RangeError);
 });

@@ -69,17 +69,24 @@ describe('bytes that are no model', () => {
 
   test('random bytes (seed 5)', () => {
     const random = seededRandom(5);
-    for (let k = 0; k < 50; k++) readOrRefuse(Uint8Array.from({ length: 2000 }, () => 256 * random()), 'noise.step');
+    for (let k = 0; k < 50; k++)
+      readOrRefuse(
+        Uint8Array.from({ length: 2000 }, () => 256 * random()),
+        'noise.step',
+      );
   });
 
   test('random bytes after a STEP head (seed 6)', () => {
     const random = seededRandom(6);
     const head = encode('ISO-10303-21;\nHEADER;\nENDSEC;\nDATA;\n');
-    for (let k = 0; k < 50; k++) readOrRefuse(Uint8Array.from([...head, ...Array.from({ length: 2000 }, () => 32 + 95 * random())]), 'noise.step');
+    for (let k = 0; k < 50; k++)
+      readOrRefuse(Uint8Array.from([...head, ...Array.from({ length: 2000 }, () => 32 + 95 * random())]), 'noise.step');
   });
 
   test('the file’s name does not decide, its content does', () => {
-    const text = writeBezierPatchText([{ ...randomPatch(seededRandom(1), 3, 3, 4, 4), weights: new Float64Array(16).fill(1) }]);
+    const text = writeBezierPatchText([
+      { ...randomPatch(seededRandom(1), 3, 3, 4, 4), weights: new Float64Array(16).fill(1) },
+    ]);
     expect((readOrRefuse(encode(text), 'wrong-name.step') as ImportResult).format).toBe('bezier-patch-text');
   });
 
@@ -93,9 +100,30 @@ describe('300 mutations of our own files (seed 77)', () => {
   const random = seededRandom(77);
   const pick = (n: number) => Math.floor(n * random());
   const patches = Array.from({ length: 3 }, () => randomPatch(random, 3, 2, 5, 4));
-  const plain = [2, 3].map((d) => ({ ...randomPatch(random, d, d, d + 1, d + 1), weights: new Float64Array((d + 1) ** 2).fill(1) }));
+  const plain = [2, 3].map((d) => ({
+    ...randomPatch(random, d, d, d + 1, d + 1),
+    weights: new Float64Array((d + 1) ** 2).fill(1),
+  }));
   const sources = [writeStep([...patches, ...plain], 'five', 0.001, ''), writeBezierPatchText(plain)];
-  const pieces = ["'", '(', ')', ';', '#', '*/', '/*', '((((((((', '1E999', '-', '.', '$', 'NaN', '#1', '\u0000', '\\X2\\', '999999999999'];
+  const pieces = [
+    "'",
+    '(',
+    ')',
+    ';',
+    '#',
+    '*/',
+    '/*',
+    '((((((((',
+    '1E999',
+    '-',
+    '.',
+    '$',
+    'NaN',
+    '#1',
+    '\u0000',
+    '\\X2\\',
+    '999999999999',
+  ];
   const mutate = (text: string): string => {
     let out = text;
     for (let n = 1 + pick(4); n > 0; n--) {
@@ -131,7 +159,8 @@ describe('300 mutations of our own files (seed 77)', () => {
 });
 
 describe('large and nasty files are read in linear time', () => {
-  const body = (data: string) => encode(`ISO-10303-21;\nHEADER;\nENDSEC;\nDATA;\n${data}\nENDSEC;\nEND-ISO-10303-21;\n`);
+  const body = (data: string) =>
+    encode(`ISO-10303-21;\nHEADER;\nENDSEC;\nDATA;\n${data}\nENDSEC;\nEND-ISO-10303-21;\n`);
 
   test.each<[string, string]>([
     ['a million opening parentheses', `#1=X(${'('.repeat(1e6)}`],
@@ -143,7 +172,10 @@ describe('large and nasty files are read in linear time', () => {
     ['a million commas', `#1=X(${','.repeat(1e6)});`],
     ['an endless number', `#1=X(${'9'.repeat(1e6)});`],
     ['an endless name', `#1=${'A'.repeat(1e6)}`],
-    ['a chain of references', Array.from({ length: 5e4 }, (_, k) => `#${k + 1}=ORIENTED_CLOSED_SHELL('',*,#${k + 2},.T.);`).join('\n')],
+    [
+      'a chain of references',
+      Array.from({ length: 5e4 }, (_, k) => `#${k + 1}=ORIENTED_CLOSED_SHELL('',*,#${k + 2},.T.);`).join('\n'),
+    ],
   ])('%s', (_, data) => {
     // A reader that is quadratic would take minutes here and run into the test's time limit.
     expect(typeof readOrRefuse(body(data), 'nasty.stp')).toBe('string');

@@ -3,8 +3,10 @@ import { analyseEdges } from '../../../solver/geometry/edges';
 import { sampleBytes, sampleText } from '../../support/samples';
 
 /** B-spline surfaces in a STEP text, counted without the reader: one keyword each, plain or in external mapping. */
-const countSplines = (text: string) => text.match(/\b(B_SPLINE_SURFACE_WITH_KNOTS|BEZIER_SURFACE|QUASI_UNIFORM_SURFACE|UNIFORM_SURFACE)\s*\(/g)?.length ?? 0;
-const countOthers = (text: string) => text.match(/=\s*(PLANE|CYLINDRICAL_SURFACE|CONICAL_SURFACE|TOROIDAL_SURFACE|SPHERICAL_SURFACE)\s*\(/g)?.length ?? 0;
+const countSplines = (text: string) =>
+  text.match(/\b(B_SPLINE_SURFACE_WITH_KNOTS|BEZIER_SURFACE|QUASI_UNIFORM_SURFACE|UNIFORM_SURFACE)\s*\(/g)?.length ?? 0;
+const countOthers = (text: string) =>
+  text.match(/=\s*(PLANE|CYLINDRICAL_SURFACE|CONICAL_SURFACE|TOROIDAL_SURFACE|SPHERICAL_SURFACE)\s*\(/g)?.length ?? 0;
 
 // Patches and units as recorded beside the samples, before and apart from this code.
 test.each([

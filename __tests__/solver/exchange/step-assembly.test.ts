@@ -1,7 +1,8 @@
 import { readModelFile } from '../../../solver/exchange/read-model-file';
 import { MILLIMETRE_CONTEXT, squareText, stepText } from '../../support/step-text';
 
-const read = (data: string, context?: string) => readModelFile(new TextEncoder().encode(stepText(data, context)), 'assembly.stp');
+const read = (data: string, context?: string) =>
+  readModelFile(new TextEncoder().encode(stepText(data, context)), 'assembly.stp');
 /** First and last corner of a patch. */
 const corners = (points: Float64Array) => [[...points.subarray(0, 3)], [...points.subarray(9, 12)]];
 
@@ -24,7 +25,9 @@ const PIECE = `${squareText(10)}\n#20=SHAPE_REPRESENTATION('piece',(#10,#60),#90
 test('a piece is turned and moved to its frame in the whole', () => {
   // z to x, x to y, so y to z; then 10 along x.
   const to = frame(70, [10, 0, 0], [1, 0, 0], [0, 1, 0]);
-  const { patches, report } = read(`${PIECE}\n${to}\n#30=SHAPE_REPRESENTATION('whole',(#60,#70),#900);\n${relation(80, 20, 30, 60, 70)}`);
+  const { patches, report } = read(
+    `${PIECE}\n${to}\n#30=SHAPE_REPRESENTATION('whole',(#60,#70),#900);\n${relation(80, 20, 30, 60, 70)}`,
+  );
   expect(report).toMatchObject({ declared: 1, imported: 1, remarks: [] });
   expect(corners(patches[0]!.points)).toEqual([
     [10, 0, 0],
@@ -34,7 +37,9 @@ test('a piece is turned and moved to its frame in the whole', () => {
 
 test('a frame of the piece away from its origin is undone first', () => {
   const from = frame(64, [1, 1, 0], [0, 0, 1], [1, 0, 0]);
-  const { patches } = read(`${PIECE}\n${from}\n#30=SHAPE_REPRESENTATION('whole',(#60),#900);\n${relation(80, 20, 30, 64, 60)}`);
+  const { patches } = read(
+    `${PIECE}\n${from}\n#30=SHAPE_REPRESENTATION('whole',(#60),#900);\n${relation(80, 20, 30, 64, 60)}`,
+  );
   expect(corners(patches[0]!.points)).toEqual([
     [-1, -1, 0],
     [0, 0, 0],
@@ -77,7 +82,8 @@ test('the usage tells which of the two is the whole when they are swapped', () =
   const product = (id: number, representation: number, name: string) =>
     `#${id}=PRODUCT('${name}','${name}','',());\n#${id + 1}=PRODUCT_DEFINITION_FORMATION('','',#${id});\n#${id + 2}=PRODUCT_DEFINITION('','',#${id + 1},$);\n` +
     `#${id + 3}=PRODUCT_DEFINITION_SHAPE('','',#${id + 2});\n#${id + 4}=SHAPE_DEFINITION_REPRESENTATION(#${id + 3},#${representation});`;
-  const usage = "#130=NEXT_ASSEMBLY_USAGE_OCCURRENCE('1','','',#112,#102,$);\n#131=PRODUCT_DEFINITION_SHAPE('','',#130);\n#132=CONTEXT_DEPENDENT_SHAPE_REPRESENTATION(#80,#131);";
+  const usage =
+    "#130=NEXT_ASSEMBLY_USAGE_OCCURRENCE('1','','',#112,#102,$);\n#131=PRODUCT_DEFINITION_SHAPE('','',#130);\n#132=CONTEXT_DEPENDENT_SHAPE_REPRESENTATION(#80,#131);";
   const { patches } = read(
     `${PIECE}\n${to}\n#30=SHAPE_REPRESENTATION('whole',(#60,#70),#900);\n${product(100, 20, 'nut')}\n${product(110, 30, 'car')}\n${relation(80, 30, 20, 70, 60)}\n${usage}`,
   );
@@ -95,26 +101,36 @@ test('pieces of several products are grouped by product', () => {
 });
 
 test('layers name groups where solids and sets do not', () => {
-  const { patches } = read(`${squareText(10)}\n#20=GEOMETRIC_SET('',(#10));\n#21=PRESENTATION_LAYER_ASSIGNMENT('sails','',(#10));\n#22=SHAPE_REPRESENTATION('',(#20),#900);`);
+  const { patches } = read(
+    `${squareText(10)}\n#20=GEOMETRIC_SET('',(#10));\n#21=PRESENTATION_LAYER_ASSIGNMENT('sails','',(#10));\n#22=SHAPE_REPRESENTATION('',(#20),#900);`,
+  );
   expect(patches[0]!.group).toBe('sails');
 });
 
 describe('damage', () => {
   test('a frame that cannot be read leaves the piece where it was drawn, and says so', () => {
     const bad = frame(70, [10, 0, 0], [0, 0, 0], [1, 0, 0]);
-    const { patches, report } = read(`${PIECE}\n${bad}\n#30=SHAPE_REPRESENTATION('',(#60,#70),#900);\n${relation(80, 20, 30, 60, 70)}`);
+    const { patches, report } = read(
+      `${PIECE}\n${bad}\n#30=SHAPE_REPRESENTATION('',(#60,#70),#900);\n${relation(80, 20, 30, 60, 70)}`,
+    );
     expect(patches[0]!.points[0]).toBe(0);
-    expect(report.remarks).toEqual(['The place of a piece in its assembly could not be read. The piece is shown where it was drawn.']);
+    expect(report.remarks).toEqual([
+      'The place of a piece in its assembly could not be read. The piece is shown where it was drawn.',
+    ]);
   });
 
   test('a piece inside itself ends', () => {
-    const { report } = read(`${PIECE}\n#30=SHAPE_REPRESENTATION('',(#60),#900);\n${relation(80, 20, 30, 60, 60)}\n${relation(82, 20, 20, 60, 60)}`);
+    const { report } = read(
+      `${PIECE}\n#30=SHAPE_REPRESENTATION('',(#60),#900);\n${relation(80, 20, 30, 60, 60)}\n${relation(82, 20, 20, 60, 60)}`,
+    );
     expect(report.remarks).toEqual(['A piece that the file places inside itself was left out there.']);
     expect(report.imported).toBe(1);
   });
 
   test('two pieces inside each other are still read once', () => {
-    const { report } = read(`${PIECE}\n#30=SHAPE_REPRESENTATION('',(#60),#900);\n${relation(80, 20, 30, 60, 60)}\n${relation(82, 30, 20, 60, 60)}`);
+    const { report } = read(
+      `${PIECE}\n#30=SHAPE_REPRESENTATION('',(#60),#900);\n${relation(80, 20, 30, 60, 60)}\n${relation(82, 30, 20, 60, 60)}`,
+    );
     expect(report).toMatchObject({ declared: 1, imported: 1 });
   });
 

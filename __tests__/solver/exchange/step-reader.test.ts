@@ -2,7 +2,8 @@ import { readModelFile } from '../../../solver/exchange/read-model-file';
 import { PatchEvaluator } from '../../../solver/geometry/evaluate-patch';
 import { MILLIMETRE_CONTEXT, squareText, stepText } from '../../support/step-text';
 
-const read = (data: string, context?: string) => readModelFile(new TextEncoder().encode(stepText(data, context)), 'test.stp');
+const read = (data: string, context?: string) =>
+  readModelFile(new TextEncoder().encode(stepText(data, context)), 'test.stp');
 const message = (data: string): string => {
   try {
     read(data);
@@ -14,12 +15,20 @@ const message = (data: string): string => {
 };
 
 describe('surfaces (ISO 10303-42)', () => {
-  const points = (n: number) => Array.from({ length: n }, (_, k) => `#${k + 1}=CARTESIAN_POINT('',(${k % 3}.,${Math.floor(k / 3)}.,0.));`).join('\n');
+  const points = (n: number) =>
+    Array.from({ length: n }, (_, k) => `#${k + 1}=CARTESIAN_POINT('',(${k % 3}.,${Math.floor(k / 3)}.,0.));`).join(
+      '\n',
+    );
   const rows = '((#1,#4,#7),(#2,#5,#8),(#3,#6,#9))';
   const base = `2,2,${rows},.UNSPECIFIED.,.F.,.F.,.F.`;
 
   test.each([
-    ['B_SPLINE_SURFACE_WITH_KNOTS', `${base},(3,3),(3,3),(0.,2.),(-1.,1.),.UNSPECIFIED.`, [0, 0, 0, 2, 2, 2], [-1, -1, -1, 1, 1, 1]],
+    [
+      'B_SPLINE_SURFACE_WITH_KNOTS',
+      `${base},(3,3),(3,3),(0.,2.),(-1.,1.),.UNSPECIFIED.`,
+      [0, 0, 0, 2, 2, 2],
+      [-1, -1, -1, 1, 1, 1],
+    ],
     ['BEZIER_SURFACE', base, [0, 0, 0, 1, 1, 1], [0, 0, 0, 1, 1, 1]],
     ['QUASI_UNIFORM_SURFACE', base, [0, 0, 0, 1, 1, 1], [0, 0, 0, 1, 1, 1]],
     ['UNIFORM_SURFACE', base, [-2, -1, 0, 1, 2, 3], [-2, -1, 0, 1, 2, 3]],
@@ -68,7 +77,11 @@ describe('surfaces (ISO 10303-42)', () => {
     const damaged = squareText(10).replace(from, to);
     expect(damaged).not.toBe(squareText(10));
     const { report } = read(`${damaged}\n${squareText(30)}`);
-    expect(report).toMatchObject({ declared: 2, imported: 1, skipped: [{ entity: 'B-spline surface', count: 1, reason }] });
+    expect(report).toMatchObject({
+      declared: 2,
+      imported: 1,
+      skipped: [{ entity: 'B-spline surface', count: 1, reason }],
+    });
     expect(message(damaged)).toContain(reason);
   });
 
@@ -189,7 +202,8 @@ describe('length unit (ISO 10303-41; inch and foot as defined in 1959, NIST SP 8
   });
 
   test('a unit that is its own base does not go round for ever', () => {
-    const loop = "#901=(CONVERSION_BASED_UNIT('X',#903)LENGTH_UNIT()NAMED_UNIT(*));\n#903=LENGTH_MEASURE_WITH_UNIT(LENGTH_MEASURE(2.),#901);";
+    const loop =
+      "#901=(CONVERSION_BASED_UNIT('X',#903)LENGTH_UNIT()NAMED_UNIT(*));\n#903=LENGTH_MEASURE_WITH_UNIT(LENGTH_MEASURE(2.),#901);";
     expect(read(squareText(10), context(loop)).report.declaredUnit).toBeNull();
   });
 

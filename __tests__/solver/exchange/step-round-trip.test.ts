@@ -16,7 +16,13 @@ test('rational and polynomial surfaces come back to the same bits, with names an
   });
   const { patches: back, report, format } = read(writeStep(patches, 'test piece', 0.001, STAMP));
   expect(format).toBe('step');
-  expect(report).toEqual({ declared: 9, imported: 9, skipped: [], remarks: [], declaredUnit: { name: 'mm', metres: 0.001 } });
+  expect(report).toEqual({
+    declared: 9,
+    imported: 9,
+    skipped: [],
+    remarks: [],
+    declaredUnit: { name: 'mm', metres: 0.001 },
+  });
   expect(back).toEqual(patches);
 });
 
@@ -25,7 +31,9 @@ test.each([
   [0.01, 'cm'],
   [1, 'm'],
 ])('a unit of %p m is written and read as %s', (metres, name) => {
-  const { report } = read(writeStep(shapePatches({ kind: 'sphere', centre: [0, 0, 0], radius: 2 }), 'ball', metres, STAMP));
+  const { report } = read(
+    writeStep(shapePatches({ kind: 'sphere', centre: [0, 0, 0], radius: 2 }), 'ball', metres, STAMP),
+  );
   expect(report.declaredUnit).toEqual({ name, metres });
 });
 
@@ -34,8 +42,19 @@ test('other units are refused rather than written wrongly', () => {
 });
 
 test('names survive apostrophes, backslashes, accents and other scripts', () => {
-  const names = ["O'Brien's face", 'back\\slash', 'Möwe, linker Flügel', '鴎の翼', 'a \\X2\\0041\\X0\\ lookalike', '☂ 😀'];
-  const patches = names.map((name) => ({ ...shapePatches({ kind: 'sphere', centre: [0, 0, 0], radius: 1 })[0]!, name, group: name }));
+  const names = [
+    "O'Brien's face",
+    'back\\slash',
+    'Möwe, linker Flügel',
+    '鴎の翼',
+    'a \\X2\\0041\\X0\\ lookalike',
+    '☂ 😀',
+  ];
+  const patches = names.map((name) => ({
+    ...shapePatches({ kind: 'sphere', centre: [0, 0, 0], radius: 1 })[0]!,
+    name,
+    group: name,
+  }));
   const back = read(writeStep(patches, 'names', 1, STAMP)).patches;
   expect(back.map((p) => p.name)).toEqual(names);
   expect(new Set(back.map((p) => p.group))).toEqual(new Set(names));

@@ -5,7 +5,15 @@ const functionsAt = (knots: number[], degree: number, t: number, order = 2) => {
   const flat = Float64Array.from(knots);
   const count = knots.length - degree - 1;
   const span = findSpan(count, degree, flat, t);
-  const out = basisDerivatives(new Float64Array((order + 1) * (degree + 1)), span, t, degree, order, flat, createBasisScratch());
+  const out = basisDerivatives(
+    new Float64Array((order + 1) * (degree + 1)),
+    span,
+    t,
+    degree,
+    order,
+    flat,
+    createBasisScratch(),
+  );
   return { span, out };
 };
 

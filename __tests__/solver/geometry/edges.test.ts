@@ -40,7 +40,9 @@ describe('closed shapes', () => {
   });
 
   test('a torus of one patch joins itself on all four sides', () => {
-    expect(counts(shapePatches({ kind: 'torus', centre: [0, 0, 0], axis: [0, 0, 1], majorRadius: 2, minorRadius: 0.5 }))).toEqual({
+    expect(
+      counts(shapePatches({ kind: 'torus', centre: [0, 0, 0], axis: [0, 0, 1], majorRadius: 2, minorRadius: 0.5 })),
+    ).toEqual({
       joined: 4,
       gapped: 0,
       open: 0,

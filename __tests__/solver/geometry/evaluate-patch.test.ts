@@ -6,7 +6,8 @@ import { randomPatch } from '../../support/random-patch';
 import { verbDerivatives } from '../../support/verb-surface';
 
 const evaluator = new PatchEvaluator();
-const at = (patch: Patch, u: number, v: number, order: 0 | 1 | 2 = 2) => evaluator.evaluate(new Float64Array(18), patch, u, v, order);
+const at = (patch: Patch, u: number, v: number, order: 0 | 1 | 2 = 2) =>
+  evaluator.evaluate(new Float64Array(18), patch, u, v, order);
 
 describe('exact circle of nine points (Piegl and Tiller 1997, sec. 7.5, fig. 7.16)', () => {
   const side = shapePatches({ kind: 'cylinder', start: [0, 0, 0], end: [0, 0, 1], radius: 1 })[0]!;
@@ -37,50 +38,60 @@ describe('exact circle of nine points (Piegl and Tiller 1997, sec. 7.5, fig. 7.1
 
 describe('random rational patches (seed 11)', () => {
   const random = seededRandom(11);
-  const patches = Array.from({ length: 12 }, (_, k) => randomPatch(random, 1 + (k % 4), 1 + ((k + 1) % 4), 5 + (k % 3), 6 + (k % 2)));
+  const patches = Array.from({ length: 12 }, (_, k) =>
+    randomPatch(random, 1 + (k % 4), 1 + ((k + 1) % 4), 5 + (k % 3), 6 + (k % 2)),
+  );
 
-  test.each(patches.map((patch, k) => [k, patch] as const))('%i: derivatives agree with central differences', (_, patch) => {
-    const h = 1e-5;
-    for (let n = 0; n < 10; n++) {
-      const u = 0.05 + 0.9 * random();
-      const v = 0.05 + 0.9 * random();
-      const nearKnot = [...patch.knotsU].some((k) => Math.abs(k - u) < 2 * h) || [...patch.knotsV].some((k) => Math.abs(k - v) < 2 * h);
-      if (nearKnot) continue;
-      const d = at(patch, u, v);
-      const difference = (from: number, du: number, dv: number, c: number) =>
-        (at(patch, u + du, v + dv)[from + c]! - at(patch, u - du, v - dv)[from + c]!) / (2 * h);
-      // Size of the patch in its parameters; truncation is h² times the third derivatives, which reach 1e4 of it.
-      const tolerance = 1e-5 * Math.max(...[3, 6, 9, 12, 15].map((k) => Math.hypot(d[k]!, d[k + 1]!, d[k + 2]!)));
-      for (let c = 0; c < 3; c++) {
-        expect(Math.abs(d[3 + c]! - difference(0, h, 0, c))).toBeLessThan(tolerance);
-        expect(Math.abs(d[6 + c]! - difference(0, 0, h, c))).toBeLessThan(tolerance);
-        expect(Math.abs(d[9 + c]! - difference(3, h, 0, c))).toBeLessThan(tolerance);
-        expect(Math.abs(d[12 + c]! - difference(3, 0, h, c))).toBeLessThan(tolerance);
-        expect(Math.abs(d[15 + c]! - difference(6, 0, h, c))).toBeLessThan(tolerance);
+  test.each(patches.map((patch, k) => [k, patch] as const))(
+    '%i: derivatives agree with central differences',
+    (_, patch) => {
+      const h = 1e-5;
+      for (let n = 0; n < 10; n++) {
+        const u = 0.05 + 0.9 * random();
+        const v = 0.05 + 0.9 * random();
+        const nearKnot =
+          [...patch.knotsU].some((k) => Math.abs(k - u) < 2 * h) ||
+          [...patch.knotsV].some((k) => Math.abs(k - v) < 2 * h);
+        if (nearKnot) continue;
+        const d = at(patch, u, v);
+        const difference = (from: number, du: number, dv: number, c: number) =>
+          (at(patch, u + du, v + dv)[from + c]! - at(patch, u - du, v - dv)[from + c]!) / (2 * h);
+        // Size of the patch in its parameters; truncation is h² times the third derivatives, which reach 1e4 of it.
+        const tolerance = 1e-5 * Math.max(...[3, 6, 9, 12, 15].map((k) => Math.hypot(d[k]!, d[k + 1]!, d[k + 2]!)));
+        for (let c = 0; c < 3; c++) {
+          expect(Math.abs(d[3 + c]! - difference(0, h, 0, c))).toBeLessThan(tolerance);
+          expect(Math.abs(d[6 + c]! - difference(0, 0, h, c))).toBeLessThan(tolerance);
+          expect(Math.abs(d[9 + c]! - difference(3, h, 0, c))).toBeLessThan(tolerance);
+          expect(Math.abs(d[12 + c]! - difference(3, 0, h, c))).toBeLessThan(tolerance);
+          expect(Math.abs(d[15 + c]! - difference(6, 0, h, c))).toBeLessThan(tolerance);
+        }
       }
-    }
-  });
+    },
+  );
 
-  test.each(patches.map((patch, k) => [k, patch] as const))('%i: agrees with an independent library (verb-nurbs-web)', (_, patch) => {
-    for (let n = 0; n < 10; n++) {
-      const u = random();
-      const v = random();
-      const ours = at(patch, u, v);
-      const theirs = verbDerivatives(patch, u, v);
-      const slots: [number, number[]][] = [
-        [0, theirs[0]![0]!],
-        [3, theirs[1]![0]!],
-        [6, theirs[0]![1]!],
-        [9, theirs[2]![0]!],
-        [12, theirs[1]![1]!],
-        [15, theirs[0]![2]!],
-      ];
-      for (const [slot, expected] of slots) {
-        const size = Math.max(1, Math.hypot(...expected));
-        for (let c = 0; c < 3; c++) expect(Math.abs(ours[slot + c]! - expected[c]!)).toBeLessThan(1e-10 * size);
+  test.each(patches.map((patch, k) => [k, patch] as const))(
+    '%i: agrees with an independent library (verb-nurbs-web)',
+    (_, patch) => {
+      for (let n = 0; n < 10; n++) {
+        const u = random();
+        const v = random();
+        const ours = at(patch, u, v);
+        const theirs = verbDerivatives(patch, u, v);
+        const slots: [number, number[]][] = [
+          [0, theirs[0]![0]!],
+          [3, theirs[1]![0]!],
+          [6, theirs[0]![1]!],
+          [9, theirs[2]![0]!],
+          [12, theirs[1]![1]!],
+          [15, theirs[0]![2]!],
+        ];
+        for (const [slot, expected] of slots) {
+          const size = Math.max(1, Math.hypot(...expected));
+          for (let c = 0; c < 3; c++) expect(Math.abs(ours[slot + c]! - expected[c]!)).toBeLessThan(1e-10 * size);
+        }
       }
-    }
-  });
+    },
+  );
 
   test('lower orders give the same numbers and touch nothing beyond theirs', () => {
     const patch = patches[0]!;
@@ -99,7 +110,8 @@ describe('random rational patches (seed 11)', () => {
     const ours = at(patch, 0.41, 0.62);
     const big = at(scaled, 0.41, 0.62);
     // Scaling rounds every control point once more.
-    for (let k = 0; k < 18; k++) expect(Math.abs(big[k]! / scale - ours[k]!)).toBeLessThan(1e-12 * Math.max(1, Math.hypot(...ours)));
+    for (let k = 0; k < 18; k++)
+      expect(Math.abs(big[k]! / scale - ours[k]!)).toBeLessThan(1e-12 * Math.max(1, Math.hypot(...ours)));
     const normal = new Float64Array(6);
     expect(evaluator.normal(normal, 0, patch, 0.41, 0.62)).toBe(true);
     expect(evaluator.normal(normal, 3, scaled, 0.41, 0.62)).toBe(true);

@@ -28,7 +28,8 @@ function measure(patches: readonly Patch[]): { area: number; volume: number } {
   let volume = 0;
   for (const patch of patches) {
     const [u0, u1, v0, v1] = patchDomain(patch);
-    const spans = (knots: Float64Array, from: number, to: number) => [...new Set(knots)].filter((t) => t >= from && t <= to);
+    const spans = (knots: Float64Array, from: number, to: number) =>
+      [...new Set(knots)].filter((t) => t >= from && t <= to);
     const us = spans(patch.knotsU, u0, u1);
     const vs = spans(patch.knotsV, v0, v1);
     for (let a = 0; a + 1 < us.length; a++) {
@@ -52,7 +53,12 @@ function measure(patches: readonly Patch[]): { area: number; volume: number } {
 
 // Elementary formulas: 4πR², 4πR³/3; 4π²Rr, 2π²Rr²; 2πRh + 2πR², πR²h.
 const cases: { name: string; shape: Shape; area: number; volume: number }[] = [
-  { name: 'sphere R = .05', shape: { kind: 'sphere', centre: [0.2, -0.1, 3], radius: 0.05 }, area: 0.0314159265359, volume: 0.000523598775598 },
+  {
+    name: 'sphere R = .05',
+    shape: { kind: 'sphere', centre: [0.2, -0.1, 3], radius: 0.05 },
+    area: 0.0314159265359,
+    volume: 0.000523598775598,
+  },
   {
     name: 'torus R = 1, r = .25, tilted',
     shape: { kind: 'torus', centre: [1, 2, 3], axis: [1, 2, -1], majorRadius: 1, minorRadius: 0.25 },

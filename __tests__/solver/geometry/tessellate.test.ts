@@ -23,7 +23,10 @@ function volume(mesh: Tessellation): number {
   let sum = 0;
   for (let t = 0; t < mesh.triangles.length / 3; t++) {
     const [a, b, c] = [corner(mesh, t, 0), corner(mesh, t, 1), corner(mesh, t, 2)];
-    sum += a[0]! * (b[1]! * c[2]! - b[2]! * c[1]!) + a[1]! * (b[2]! * c[0]! - b[0]! * c[2]!) + a[2]! * (b[0]! * c[1]! - b[1]! * c[0]!);
+    sum +=
+      a[0]! * (b[1]! * c[2]! - b[2]! * c[1]!) +
+      a[1]! * (b[2]! * c[0]! - b[0]! * c[2]!) +
+      a[2]! * (b[0]! * c[1]! - b[1]! * c[0]!);
   }
   return sum / 6;
 }
@@ -34,7 +37,9 @@ describe.each(Object.entries(shapes))('%s', (_, shape) => {
 
   test('the middles of triangles miss the surface by one chord for each direction at most', () => {
     for (let t = 0; t < mesh.triangles.length / 3; t++) {
-      const middle = [0, 1, 2].map((d) => (corner(mesh, t, 0)[d]! + corner(mesh, t, 1)[d]! + corner(mesh, t, 2)[d]!) / 3);
+      const middle = [0, 1, 2].map(
+        (d) => (corner(mesh, t, 0)[d]! + corner(mesh, t, 1)[d]! + corner(mesh, t, 2)[d]!) / 3,
+      );
       expect(fitsShape(shape, middle)).toBeLessThan(2 * chord);
     }
   });
@@ -63,7 +68,8 @@ describe.each(Object.entries(shapes))('%s', (_, shape) => {
 });
 
 test('a chord 16 times shorter brings the sphere’s volume 16 times nearer', () => {
-  const error = (chord: number) => Math.abs(volume(tessellate(shapePatches(shapes.sphere!), { chord, maxCells: 400 })) - (4 / 3) * Math.PI * 0.125);
+  const error = (chord: number) =>
+    Math.abs(volume(tessellate(shapePatches(shapes.sphere!), { chord, maxCells: 400 })) - (4 / 3) * Math.PI * 0.125);
   const rate = Math.log2(error(4e-3) / error(2.5e-4)) / 4;
   // Cells come in whole numbers, which moves the rate a little.
   expect(rate).toBeGreaterThan(0.8);
@@ -84,22 +90,25 @@ describe('meshes for the screen', () => {
     expect(new Set(mesh.positions.filter((_, k) => k % 3 === 0)).size).toBeGreaterThan(40);
   });
 
-  test.each(['sphere', 'cylinder', 'box', 'torus'])('a %s has no pinholes: joined vertices share their place bit for bit', (kind) => {
-    const patches = shapePatches(shapes[kind]!);
-    const mesh = tessellateForDisplay(patches, 4, 8000);
-    // Every side of a triangle, by the places of its ends, is met exactly once the other way round.
-    const place = (v: number) => mesh.positions.subarray(3 * v, 3 * v + 3).join(' ');
-    const sides = new Map<string, number>();
-    for (let t = 0; t < mesh.triangles.length; t += 3) {
-      for (let k = 0; k < 3; k++) {
-        const from = place(mesh.triangles[t + k]!);
-        const to = place(mesh.triangles[t + ((k + 1) % 3)]!);
-        sides.set(`${from}>${to}`, (sides.get(`${from}>${to}`) ?? 0) + 1);
+  test.each(['sphere', 'cylinder', 'box', 'torus'])(
+    'a %s has no pinholes: joined vertices share their place bit for bit',
+    (kind) => {
+      const patches = shapePatches(shapes[kind]!);
+      const mesh = tessellateForDisplay(patches, 4, 8000);
+      // Every side of a triangle, by the places of its ends, is met exactly once the other way round.
+      const place = (v: number) => mesh.positions.subarray(3 * v, 3 * v + 3).join(' ');
+      const sides = new Map<string, number>();
+      for (let t = 0; t < mesh.triangles.length; t += 3) {
+        for (let k = 0; k < 3; k++) {
+          const from = place(mesh.triangles[t + k]!);
+          const to = place(mesh.triangles[t + ((k + 1) % 3)]!);
+          sides.set(`${from}>${to}`, (sides.get(`${from}>${to}`) ?? 0) + 1);
+        }
       }
-    }
-    const open = [...sides.keys()].filter((key) => !sides.has(key.split('>').reverse().join('>')));
-    expect(open).toEqual([]);
-  });
+      const open = [...sides.keys()].filter((key) => !sides.has(key.split('>').reverse().join('>')));
+      expect(open).toEqual([]);
+    },
+  );
 
   test('are the same whenever they are made', () => {
     const patches = [randomPatch(seededRandom(3), 3, 3, 6, 6), randomPatch(seededRandom(4), 2, 3, 5, 7)];

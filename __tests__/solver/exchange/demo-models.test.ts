@@ -1,24 +1,27 @@
 import { readFileSync } from 'node:fs';
 import { join } from 'node:path';
-import { demoModels } from '../../assets/models/build/demo-models';
-import { readModelFile } from '../../solver/exchange/read-model-file';
-import { analyseEdges } from '../../solver/geometry/edges';
-import { boundsOf, tessellate } from '../../solver/geometry/tessellate';
+import { demoModels } from '../../../assets/models/build/demo-models';
+import { readModelFile } from '../../../solver/exchange/read-model-file';
+import { analyseEdges } from '../../../solver/geometry/edges';
+import { boundsOf, tessellate } from '../../../solver/geometry/tessellate';
 
-const FOLDER = join(__dirname, '../../assets/models');
+const FOLDER = join(__dirname, '../../../assets/models');
 const read = (file: string) => readModelFile(readFileSync(join(FOLDER, file)), file);
 const size = (file: string, group?: string) => {
   const patches = read(file).patches.filter((p) => group === undefined || p.group === group);
   const { min, max, diagonal } = boundsOf(Float64Array.from(patches.flatMap((p) => [...p.points])));
-  const box = boundsOf(tessellate(patches, { chord: diagonal * 1e-4 }).positions);
-  return { extent: min.map((_, d) => box.max[d]! - box.min[d]!), ...box, controlled: [min, max] };
+  const box = boundsOf(tessellate(patches, { chord: diagonal * 1e-3 }).positions);
+  return { extent: min.map((_, d) => box.max[d]! - box.min[d]!), ...box };
 };
 
-test.each(demoModels().map(({ file, text }) => [file, text] as const))('%s is what the generator writes', (file, text) => {
-  expect(readFileSync(join(FOLDER, file), 'utf8')).toBe(text);
-  const { report, patches } = read(file);
-  expect(report).toMatchObject({ declared: patches.length, imported: patches.length, skipped: [], remarks: [] });
-});
+test.each(demoModels().map(({ file, text }) => [file, text] as const))(
+  '%s is what the generator writes',
+  (file, text) => {
+    expect(readFileSync(join(FOLDER, file), 'utf8')).toBe(text);
+    const { report, patches } = read(file);
+    expect(report).toMatchObject({ declared: patches.length, imported: patches.length, skipped: [], remarks: [] });
+  },
+);
 
 test('the pudding is 150 mm wide and 104 mm high, closed, and floats half a millimetre above its plate', () => {
   const pudding = size('steamed-pudding.step', 'pudding');
@@ -40,7 +43,9 @@ test('the gull has three gaps in its tail, an open beak and feet that touch noth
   const { patches } = read('parade-gull.step');
   const report = analyseEdges(patches);
   expect(report.largestGap).toBeCloseTo(2.4, 3);
-  const found = (state: string) => [...new Set(report.edges.filter((e) => e.state === state).map((e) => patches[e.patch]!.group))];
+  const found = (state: string) => [
+    ...new Set(report.edges.filter((e) => e.state === state).map((e) => patches[e.patch]!.group)),
+  ];
   expect(report.gapped).toBe(6);
   expect(found('gapped')).toEqual(['tail']);
   expect(found('open')).toEqual(['beak']);
