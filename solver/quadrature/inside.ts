@@ -1,5 +1,4 @@
 import type { Piece } from './pieces';
-import { boxesMeet } from './pieces';
 import { castRays } from './rays/cast';
 import { crossingDoubt, insideIntervals, type RayIntervals, subtractIntervals } from './rays/intervals';
 import { rayLattice, type RayLattice } from './rays/lattice';
@@ -7,7 +6,9 @@ import { addIntervals, sweptVolume, voxelMoments, type VoxelMoments } from './ra
 import type { TriangleSoup } from './rays/soup';
 
 export interface Inside {
-  /** m³, mean of the three axes */
+  /** m³, mean of the three axes, before anything is taken out */
+  ownVolume: number;
+  /** m³, what is left */
   volume: number;
   rays: number;
   /** Per axis, to be summed into voxels once their size is known. */
@@ -24,16 +25,12 @@ export interface RayDensity {
 const DOUBT_STRIDE = 16;
 const DOUBT_LIMIT = 0.03;
 
-/**
- * The inside of a piece along rays of three axes. `later` are the pieces that take precedence where
- * they overlap it (materials later in the scene's list): their inside is taken out.
- */
-export function castInside(soup: TriangleSoup, piece: Piece, later: readonly Piece[], density: RayDensity): Inside {
+/** The inside of a piece along rays of three axes, less that of the pieces it yields to where they overlap. */
+export function castInside(soup: TriangleSoup, piece: Piece, yieldsTo: readonly Piece[], density: RayDensity): Inside {
   const { bounds } = piece;
   const extent = [0, 1, 2].map((d) => bounds.max[d]! - bounds.min[d]!);
   const longest = Math.max(...extent);
   const across = extent.map((e) => Math.max(density.across, Math.ceil((density.along * e) / longest)));
-  const overlapping = later.filter((other) => boxesMeet(piece.bounds, other.bounds));
   let trust = true;
   let sweeps: Inside['sweeps'] = [];
   let rays = 0;
@@ -53,13 +50,17 @@ export function castInside(soup: TriangleSoup, piece: Piece, later: readonly Pie
     return true;
   };
   if (!sweep()) sweep();
+  const ownVolume = meanVolume(sweeps);
   for (const one of sweeps) {
-    for (const other of overlapping) {
-      one.intervals = subtractIntervals(one.intervals, rayInside(one.lattice, soup, other, true));
+    for (const other of yieldsTo) {
+      one.intervals = subtractIntervals(one.intervals, rayInside(one.lattice, soup, other, other.closed));
     }
   }
-  const volume = sweeps.reduce((sum, s) => sum + sweptVolume(s.lattice, s.intervals) / 3, 0);
-  return { volume, rays, sweeps };
+  return { ownVolume, volume: meanVolume(sweeps), rays, sweeps };
+}
+
+function meanVolume(sweeps: Inside['sweeps']): number {
+  return sweeps.reduce((sum, { lattice, intervals }) => sum + sweptVolume(lattice, intervals) / 3, 0);
 }
 
 function rayInside(lattice: RayLattice, soup: TriangleSoup, piece: Piece, trust: boolean): RayIntervals {

@@ -1,7 +1,6 @@
 import type { Patch } from '../geometry/patch';
 import { boundsOf } from '../geometry/tessellate';
 import { flipPatch } from '../geometry/transform';
-import { splitParts } from '../parts/part-counts';
 import { assembleParts, partCentres } from '../parts/place-parts';
 import type { Scene } from '../scene';
 import { basisField } from '../weights/basis-field';
@@ -10,44 +9,29 @@ import { projectCells } from './cells';
 import { connectPatches } from './components';
 import { dilatationGroups } from './dilatation';
 import { exposedSamples } from './exposure';
-import { type FinePoints, finePointsOf, totalVolume } from './fine-points';
-import { castInside, type Inside, insideMoments } from './inside';
+import { totalVolume } from './fine-points';
 import { patchMaterials } from './materials';
 import { bodyMatrices } from './matrices';
 import { inwardPatches } from './orientation';
-import { findPieces, type Piece } from './pieces';
+import { findPieces } from './pieces';
 import { groupPoints } from './point-groups';
+import { overlapOrder } from './precedence';
 import type { Body, Parts, Prepared } from './prepared';
 import { patchSoup } from './rays/patch-soup';
 import { scatterOnTriangles } from './rays/scatter';
-import { areaOf, flipTriangles, type TriangleSoup } from './rays/soup';
+import { flipTriangles, type TriangleSoup } from './rays/soup';
 import { massReport, pieceRemarks } from './report';
 import { samplePlaces, surfaceSamples } from './samples';
-import { isSheet, SHEET_THICKNESS, sheetPoints } from './sheets';
+import { SHEET_THICKNESS } from './sheets';
+import { findSolids, type Solid } from './solids';
 import { StageClock } from './stage-clock';
 import { displayMesh, surfaceMap, VERTEX_BUDGET } from './surface-map';
 import { findTies, tieRows } from './ties';
 
-/** Rays along a piece's longest side, and at least across the others. */
-const RAYS = { along: 72, across: 18 };
-/** Voxels that carry a part's fine points: fewer a part when there are many parts. */
-const VOXELS = { all: 8000, mostPerPart: 200, leastPerPart: 80, leastPerBody: 400 };
-const LEAST_ACROSS = 4;
-
-/** A piece with what set-up has found out about it. */
-interface Solid {
-  piece: Piece;
-  inside: Inside;
-  sheet: boolean;
-  partCount: number;
-  fine: FinePoints;
-}
-
 /**
  * Set-up of a scene: everything the mechanics needs. Patches in metres, as read (any side out);
- * the same input gives the same bits, times in the report apart. Where bodies of several materials
- * overlap, the material later in the scene's list wins; pieces of one material that run into each
- * other are one body.
+ * the same input gives the same bits, times in the report apart. Pieces of one material that run
+ * into each other are one body; who wins where unlike materials overlap, see overlapOrder.
  */
 export function prepare(scene: Scene, patches: readonly Patch[], onProgress?: (stage: string, share: number) => void): Prepared {
   const clock = new StageClock(onProgress);
@@ -56,7 +40,6 @@ export function prepare(scene: Scene, patches: readonly Patch[], onProgress?: (s
   const material = patchMaterials(scene.materials, patches.length, remarks);
   const soup = patchSoup(patches);
   const extent = boundsOf(soup.positions);
-  if (!(extent.diagonal > 0)) throw new RangeError('The model has no size: all its points are one. Choose another file.');
   clock.mark('surface', 0.1);
 
   const components = connectPatches(patches, material, extent.diagonal);
@@ -65,12 +48,14 @@ export function prepare(scene: Scene, patches: readonly Patch[], onProgress?: (s
   const facing = patches.map((patch, k) => (turned[k] === 1 ? flipPatch(patch) : patch));
   clock.mark('orientation', 0.2);
 
-  const pieces = findPieces(soup, components, material);
+  const found = findPieces(soup, components, material);
   clock.mark('pieces', 0.3);
 
   const thickness = SHEET_THICKNESS * extent.diagonal;
-  const solids = findSolids(scene, soup, facing, pieces, thickness);
-  remarks.push(...pieceRemarks(turned, solids, thickness));
+  const { solids, lost } = findSolids(scene, soup, facing, found, thickness);
+  if (solids.length === 0) throw new RangeError('Nothing in the model has a surface or an inside. Choose another file.');
+  const pieces = solids.map((solid) => solid.piece);
+  remarks.push(...pieceRemarks({ turned, solids, lost, thickness }));
   clock.mark('inside', 0.5);
 
   const bodyOfPatch = new Int32Array(patches.length);
@@ -79,7 +64,7 @@ export function prepare(scene: Scene, patches: readonly Patch[], onProgress?: (s
   const bodies = bodiesOf(solids, parts);
   const mesh = displayMesh(facing, { diagonal: extent.diagonal, vertexBudget: VERTEX_BUDGET });
   const places = samplePlaces(facing);
-  const tiePlaces = findTies(soup, pieces, scene.bondDistance, extent.diagonal);
+  const tiePlaces = findTies(soup, pieces, overlapOrder(soup, pieces), scene.bondDistance, extent.diagonal);
   const bodyOfSample = places.patch.map((k) => bodyOfPatch[k]!);
   const bodyOfVertex = mesh.patch.map((k) => bodyOfPatch[k]!);
   bodies.forEach((body, b) => {
@@ -129,30 +114,6 @@ export function prepare(scene: Scene, patches: readonly Patch[], onProgress?: (s
       remarks,
     },
   };
-}
-
-function findSolids(scene: Scene, soup: TriangleSoup, facing: readonly Patch[], pieces: readonly Piece[], thickness: number): Solid[] {
-  const found = pieces.map((piece) => {
-    const later = pieces.filter((other) => other.material > piece.material);
-    const inside = castInside(soup, piece, later, RAYS);
-    return { piece, inside, sheet: isSheet(soup, piece, inside) };
-  });
-  const counts = splitParts(
-    scene.parts.count,
-    found.map(({ piece, inside, sheet }) => ({
-      size: sheet ? areaOf(soup, piece.triangles) / 4 : Math.cbrt(inside.volume) ** 2,
-      youngsModulus: scene.materials[piece.material]!.youngsModulus,
-    })),
-  );
-  const perPart = Math.min(VOXELS.mostPerPart, Math.max(VOXELS.leastPerPart, VOXELS.all / scene.parts.count));
-  return found.map((solid, b) => {
-    const partCount = counts[b]!;
-    const voxels = Math.max(VOXELS.leastPerBody, perPart * partCount);
-    const fine = solid.sheet
-      ? sheetPoints(facing, solid.piece, thickness, voxels)
-      : finePointsOf(insideMoments(solid.inside, solid.piece, Math.cbrt(solid.inside.volume / voxels), LEAST_ACROSS));
-    return { ...solid, partCount, fine };
-  });
 }
 
 function placeParts(scene: Scene, soup: TriangleSoup, solids: readonly Solid[]): Parts {

@@ -31,28 +31,43 @@ export function massReport(fine: readonly FinePoints[]): Pick<SetupReport, 'volu
   return { volume, centroid, secondMoments };
 }
 
-/** What the person should know about sides and open pieces. `thickness` of sheets in m. */
-export function pieceRemarks(turned: Uint8Array, solids: readonly { piece: Piece; sheet: boolean }[], thickness: number): string[] {
+export interface PieceFindings {
+  turned: Uint8Array;
+  solids: readonly { piece: Piece; sheet: boolean }[];
+  /** pieces of which overlaps leave nothing */
+  lost: readonly Piece[];
+  /** of sheets, m */
+  thickness: number;
+}
+
+/** What the person should know about sides, open pieces and patches that take no part. */
+export function pieceRemarks({ turned, solids, lost, thickness }: PieceFindings): string[] {
   const remarks: string[] = [];
+  const used = solids.reduce((n, { piece }) => n + piece.patches.length, 0) + lost.reduce((n, piece) => n + piece.patches.length, 0);
+  const flat = turned.length - used;
+  if (flat > 0) remarks.push(`${flat} of ${turned.length} patches ${flat === 1 ? 'has no area and takes' : 'have no area and take'} no part.`);
+  if (lost.length > 0) {
+    remarks.push(`Patches ${patchList(lost)} lie wholly inside other materials and take no part.`);
+  }
   const over = turned.reduce((a, b) => a + b, 0);
   if (over > 0) remarks.push(`${over} of ${turned.length} patches faced inward and were turned over.`);
   const open = solids.filter(({ piece, sheet }) => !piece.closed && !sheet);
   if (open.length > 0) {
     remarks.push(
-      `${open.length === 1 ? 'One piece has' : `${open.length} pieces have`} open edges and ${open.length === 1 ? 'is' : 'are'} treated as solid: patches ${patchList(open)}.`,
+      `${open.length === 1 ? 'One piece has' : `${open.length} pieces have`} open edges and ${open.length === 1 ? 'is' : 'are'} treated as solid: patches ${patchList(open.map(({ piece }) => piece))}.`,
     );
   }
   const sheets = solids.filter(({ sheet }) => sheet);
   if (sheets.length > 0) {
     remarks.push(
-      `${sheets.length === 1 ? 'One piece encloses' : `${sheets.length} pieces enclose`} nothing and ${sheets.length === 1 ? 'is' : 'are'} treated as ${sheets.length === 1 ? 'a sheet' : 'sheets'} ${lengthText(thickness)} thick, 1 % of the model's diagonal: patches ${patchList(sheets)}.`,
+      `${sheets.length === 1 ? 'One piece encloses' : `${sheets.length} pieces enclose`} nothing and ${sheets.length === 1 ? 'is' : 'are'} treated as ${sheets.length === 1 ? 'a sheet' : 'sheets'} ${lengthText(thickness)} thick, 1 % of the model's diagonal: patches ${patchList(sheets.map(({ piece }) => piece))}.`,
     );
   }
   return remarks;
 }
 
-function patchList(solids: readonly { piece: Piece }[]): string {
-  const numbers = solids.flatMap(({ piece }) => Array.from(piece.patches)).sort((a, b) => a - b);
+function patchList(pieces: readonly Piece[]): string {
+  const numbers = pieces.flatMap(({ patches }) => Array.from(patches)).sort((a, b) => a - b);
   const shown = numbers.slice(0, 12).join(', ');
   return numbers.length > 12 ? `${shown} and ${numbers.length - 12} more` : shown;
 }

@@ -11,16 +11,18 @@ export const SHEET_THICKNESS = 0.01;
 
 /** A piece this thin for its area (mean chord over the root of the area) may be a sheet. */
 const THIN = 0.08;
+/** … and this thin it is flat, closed or not. */
+const FLAT = 1e-6;
 /** Inside a body that is closed but for gaps the winding number is near 1; next to a bare sheet it is near ½. */
 const FAINT = 0.58;
 const LOOKS = 150;
 
-/** Is this open piece a sheet: does its winding field enclose nothing, or only the sliver beside a bent sheet? */
+/** Is this piece a sheet: does it enclose nothing, or, when it is open, only the sliver beside a bent sheet? */
 export function isSheet(soup: TriangleSoup, piece: Piece, inside: Inside): boolean {
-  if (piece.closed) return false;
   const area = areaOf(soup, piece.triangles);
   const chord = (2 * inside.volume) / area;
-  if (chord > THIN * Math.sqrt(area)) return false;
+  if (chord <= FLAT * Math.sqrt(area)) return true;
+  if (piece.closed || chord > THIN * Math.sqrt(area)) return false;
   let sum = 0;
   let looks = 0;
   const place = new Float64Array(2);

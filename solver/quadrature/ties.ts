@@ -27,9 +27,15 @@ const FEW = 40;
 /**
  * Bodies of unlike material are tied where they overlap or touch, and any two bodies where they are
  * closer than the bond distance (m). The interface of an overlap is the surface, inside the other,
- * of the body that takes precedence (the later material).
+ * of the body that the other yields to (`yields` of overlapOrder).
  */
-export function findTies(soup: TriangleSoup, pieces: readonly Piece[], bondDistance: number, diagonal: number): TiePlaces {
+export function findTies(
+  soup: TriangleSoup,
+  pieces: readonly Piece[],
+  yields: readonly number[][],
+  bondDistance: number,
+  diagonal: number,
+): TiePlaces {
   const positions: number[] = [];
   const areas: number[] = [];
   const bodyA: number[] = [];
@@ -39,7 +45,8 @@ export function findTies(soup: TriangleSoup, pieces: readonly Piece[], bondDista
       const unlike = pieces[a]!.material !== pieces[b]!.material;
       const reach = Math.max(unlike ? TOUCH * diagonal : 0, bondDistance);
       if (reach === 0 || !boxesMeet(pieces[a]!.bounds, pieces[b]!.bounds, reach)) continue;
-      let found = unlike ? probe(soup, pieces[b]!, pieces[a]!, reach, true) : [];
+      const [winner, other] = yields[b]!.includes(a) ? [a, b] : [b, a];
+      let found = unlike ? probe(soup, pieces[winner]!, pieces[other]!, reach, true) : [];
       if (found.length === 0) {
         const [small, large] = areaOf(soup, pieces[a]!.triangles) < areaOf(soup, pieces[b]!.triangles) ? [a, b] : [b, a];
         found = probe(soup, pieces[small]!, pieces[large]!, reach, false);

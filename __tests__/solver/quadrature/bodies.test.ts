@@ -76,6 +76,24 @@ describe('materials', () => {
     expect(Array.from(samples.exposed)).toEqual(Array.from(samples.body, (b) => (b === 0 ? 1 : 0)));
   });
 
+  test('a core is cut out of the body round it also when its material comes first', () => {
+    const { bodies, ties } = prepare(plainScene(12, { materials: [{ ...steel, patches: sixFrom(6) }, rubber] }), patchesOf(outer, core));
+    expect(bodies.map((b) => Array.from(b.patches))).toEqual([sixFrom(6), sixFrom(0)]);
+    expect(Math.abs(bodies[0]!.volume / 0.064 - 1)).toBeLessThan(0.005);
+    expect(Math.abs(bodies[1]!.volume / (1 - 0.064) - 1)).toBeLessThan(0.005);
+    expect(Math.abs(ties.areas.reduce((a, b) => a + b, 0) / (6 * 0.16) - 1)).toBeLessThan(0.01);
+  });
+
+  test('where neither swallows the other the later material takes the overlap', () => {
+    const { bodies } = prepare(
+      plainScene(12, { materials: [{ ...foam, patches: sixFrom(6) }, rubber] }),
+      patchesOf(box([0, 0, 0], [1, 0.5, 0.5]), box([0.8, 0.1, 0.1], [1.8, 0.4, 0.4])),
+    );
+    expect(bodies.map((b) => b.material)).toEqual([0, 1]);
+    expect(Math.abs(bodies[1]!.volume / 0.25 - 1)).toBeLessThan(0.005);
+    expect(Math.abs(bodies[0]!.volume / (0.09 - 0.2 * 0.09) - 1)).toBeLessThan(0.005);
+  });
+
   test('boxes of unlike material that share a face are tied over it', () => {
     const { bodies, ties } = prepare(
       plainScene(8, { materials: [rubber, { ...foam, patches: sixFrom(6) }] }),
@@ -96,6 +114,15 @@ describe('materials', () => {
     expect(() => prepare(plainScene(4, { materials: [rubber, { ...steel, patches: [9] }] }), patchesOf(outer))).toThrow(
       'Material “Steel” names patch 9, but the model has patches 0 to 5. Correct its list of patches.',
     );
+  });
+
+  test('patches without area are left out, with a remark', () => {
+    const patches = patchesOf(outer);
+    const point = { ...patches[0]!, points: patches[0]!.points.map(() => 2) };
+    const { bodies, report } = prepare(plainScene(4), [...patches, point]);
+    expect(bodies.map((b) => Array.from(b.patches))).toEqual([sixFrom(0)]);
+    expect(report.remarks).toEqual(['1 of 7 patches has no area and takes no part.']);
+    expect(() => prepare(plainScene(4), [point])).toThrow('The model has no size: all its points are one. Choose another file.');
   });
 
   test('a model without patches is refused', () => {

@@ -11,7 +11,8 @@ const BUDGET = 30000;
 
 /** The triangles that rays and winding numbers see, in the patches' own turn. Patches in metres. */
 export function patchSoup(patches: readonly Patch[]): TriangleSoup {
-  const diagonal = patches.reduce((most, p) => Math.max(most, boundsOf(p.points).diagonal), Number.MIN_VALUE);
+  const diagonal = boundsOf(Float64Array.from(patches.flatMap((p) => Array.from(p.points)))).diagonal;
+  if (!(diagonal > 0)) throw new RangeError('The model has no size: all its points are one. Choose another file.');
   const evaluator = new PatchEvaluator();
   let chord = CHORD * diagonal;
   for (;;) {
