@@ -9,7 +9,7 @@ const FOLDER = join(__dirname, '../../../assets/models');
 const read = (file: string) => readModelFile(readFileSync(join(FOLDER, file)), file);
 const size = (file: string, group?: string) => {
   const patches = read(file).patches.filter((p) => group === undefined || p.group === group);
-  const { min, max, diagonal } = boundsOf(Float64Array.from(patches.flatMap((p) => [...p.points])));
+  const { min, diagonal } = boundsOf(Float64Array.from(patches.flatMap((p) => [...p.points])));
   const box = boundsOf(tessellate(patches, { chord: diagonal * 1e-3 }).positions);
   return { extent: min.map((_, d) => box.max[d]! - box.min[d]!), ...box };
 };
