@@ -86,7 +86,7 @@ export class Simulation {
     this.bound = kernels.bind(prepared.points, this.pattern, prepared.parts.basis);
     const length = this.pattern.blockCount * this.pattern.size ** 2;
     this.K = this.bound.allocate(length);
-    this.constant = new Float64Array(length);
+    this.constant = this.bound.allocate(length);
     this.potential = new PotentialEnergy(prepared, scene, this.bound, this.pattern);
     this.findGauges();
     this.potential.elastic.gradient(this.coefficients, null);
@@ -144,16 +144,17 @@ export class Simulation {
   }
 
   /**
-   * One substep of the scene's motion. `exact` solves it as a bake does: to a tight tolerance and from a fresh
-   * factor, so that the result depends on the state alone. On failure the pose before the step is put back and
-   * SolverStopped is thrown.
+   * One substep of the scene's motion. `exact` solves it as a bake does, to a tight tolerance; `fresh` begins with a
+   * new factor, so that the result depends on the saved state alone. On failure the pose before the step is put back
+   * and SolverStopped is thrown.
    */
-  step(exact = false): StepReport {
+  step({ exact = false, fresh = false }: { exact?: boolean; fresh?: boolean } = {}): StepReport {
     const { time } = this.scene;
     if (time.kind !== 'motion')
       throw new SolverStopped('This scene is set to find its rest under load. Choose motion to step it.');
     const dt = 1 / (time.framesPerSecond * time.substeps);
     const before = this.saveState();
+    if (fresh) this.factorFresh = false;
     try {
       const report = this.advance(dt, time.method === 'hht', exact);
       if (report.converged) return { newtonSteps: report.steps, factors: report.factors, converged: true };
@@ -161,7 +162,7 @@ export class Simulation {
       this.restoreState(before);
       throw error;
     }
-    const frame = Math.floor((this.time * time.framesPerSecond) / 1) + 1;
+    const frame = Math.floor(this.time * time.framesPerSecond) + 1;
     const folded = this.potential.elastic.worstJ() < 0.1;
     this.restoreState(before);
     throw new SolverStopped(
@@ -220,8 +221,8 @@ export class Simulation {
         tolerance: exact ? BAKE_TOLERANCE : LIVE_TOLERANCE,
         size: this.prepared.report.diagonal,
         maxSteps: 60,
-        factor: exact ? 'every' : 'lagged',
-        keepFactor: this.factorFresh && !exact,
+        factor: 'lagged',
+        keepFactor: this.factorFresh,
         trustFullSteps: true,
       },
       guess,

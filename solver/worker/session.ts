@@ -309,7 +309,7 @@ class Bake {
     this.traces.push(this.trace());
     this.pose++;
     const done = this.pose === this.poses;
-    if (!done) for (let s = 0; s < this.substeps; s++) this.simulation.step(true);
+    if (!done) for (let s = 0; s < this.substeps; s++) this.simulation.step({ exact: true, fresh: s === 0 });
     if (this.waiting.length < POSES_PER_CHUNK && !done) return { chunk: null, done };
     const first = this.pose - this.waiting.length;
     const bytes = encodeChunk(this.waiting, first, { mode: 'quantised', quantum: this.quantum });

@@ -1,0 +1,22 @@
+/** The solver's public surface: what the application, the server and the command line may use. */
+export { ChunkFault, decodeChunk, encodeChunk, quantumFor } from './frames/frame-store';
+export { readModelFile } from './exchange/read-model-file';
+export { UnreadableModelError } from './exchange/unreadable-model-error';
+export { boundsOf } from './geometry/tessellate';
+export type { Patch } from './geometry/patch';
+export { shapePatches } from './geometry/shapes';
+export { scalePatch } from './geometry/transform';
+export { bestKernels } from './kernels/best-kernels';
+export { plainKernels } from './kernels/plain';
+export type { Kernels } from './kernels/kernels';
+export { prepare } from './quadrature/prepare';
+export type { BasisRows, Prepared, SetupReport, SurfaceMap } from './quadrature/prepared';
+export { evaluateRows } from './quadrature/rows';
+export { restCoefficients } from './quadrature/rest';
+export { surfaceFromRecipe, surfaceRecipe } from './quadrature/surface-recipe';
+export type * from './scene';
+export { runScene, type SceneResult } from './time/run-scene';
+export { Simulation, type Readouts, type StaticReport, type StepReport } from './time/simulation';
+export { SolverStopped } from './time/solver-stopped';
+export { SOLVER_VERSION } from './version';
+export type { LiveFrame, LiveSpeed, PoseTrace, Ready, Request, Response } from './worker/messages';
