@@ -1,5 +1,5 @@
 import { factorSymmetric, solveFactored } from '../math/dense';
-import { kMeans } from '../parts/k-means';
+import { type Clusters, kMeans } from '../parts/k-means';
 import type { BasisField } from '../weights/basis-field';
 import { type FinePoints, fourPoints } from './fine-points';
 
@@ -21,7 +21,7 @@ export interface Cell {
 const CELLS_QUADRATIC = 10;
 const CELLS_LINEAR = 4;
 /** Fine points a cell needs for a projection with something to average. */
-const LEAST_POINTS = 16;
+const LEAST_POINTS = 12;
 
 /**
  * Few points are enough when their gradients are projected from many: each fine point goes to its
@@ -44,13 +44,34 @@ export function projectCells(fine: FinePoints, body: number, firstPart: number, 
       volumes[n] = fine.volumes[k]!;
     });
     const wanted = Math.max(1, Math.min(perPart, Math.floor(own.length / LEAST_POINTS)));
-    const clusters = kMeans(points, volumes, wanted, 8);
+    const clusters = withoutCrumbs(kMeans(points, volumes, wanted, 8), points);
     for (let c = 0; c < clusters.count; c++) {
       const members = own.filter((_, n) => clusters.of[n] === c);
       if (members.length > 0) cells.push(projectCell(fine, members, body, part, field));
     }
   }
   return cells;
+}
+
+/** Hands the points of clusters too small to average over to the nearest cluster that is not. */
+function withoutCrumbs(clusters: Clusters, points: Float64Array): Clusters {
+  const sizes = new Int32Array(clusters.count);
+  for (const c of clusters.of) sizes[c]!++;
+  const least = Math.min(LEAST_POINTS, Math.max(...sizes));
+  const of = clusters.of.slice();
+  for (let n = 0; n < of.length; n++) {
+    if (sizes[of[n]!]! >= least) continue;
+    let best = Infinity;
+    for (let c = 0; c < clusters.count; c++) {
+      if (sizes[c]! < least) continue;
+      const d2 = [0, 1, 2].reduce((sum, d) => sum + (points[3 * n + d]! - clusters.centres[3 * c + d]!) ** 2, 0);
+      if (d2 < best) {
+        best = d2;
+        of[n] = c;
+      }
+    }
+  }
+  return { ...clusters, of };
 }
 
 function dominantParts(fine: FinePoints, body: number, field: BasisField): Int32Array {
@@ -136,6 +157,8 @@ function projectCell(fine: FinePoints, members: readonly number[], body: number,
     covariance[5]!, covariance[4]!, covariance[2]!,
   );
   factorSymmetric(factor, 3, 1e-12);
+  // A crumb of a body shrunk to a point by round-off has no slope to fit.
+  if (covariance[0]! + covariance[1]! + covariance[2]! < (1e-9 * field.parts.scales[part]!) ** 2) factor.fill(0);
   // row of the point: ∇N(point) = m0 + (point − centre)ᵀ C⁻¹ (m1, m2, m3)
   const along = new Float64Array(12);
   for (let k = 0; k < 4; k++) {

@@ -6,14 +6,14 @@ interface Group {
   cells: Cell[];
 }
 
-/** A group with fewer cells than this looks for a superset to join. */
+/** A group with fewer cells than this looks for another to join. */
 const SMALL = 8;
-/** Joining pads with zeros; more than this many times the work is not worth it. */
-const GROWTH = 1.5;
+/** What a group costs of its own, in cells: clearing its products and adding them to the system. */
+const OVERHEAD = 1.5;
 
 /**
- * Cells as quadrature points grouped by active set. Small groups join the smallest superset, or
- * failing that the union with the group of most common parts, padded with zeros. Order: by body,
+ * Cells as quadrature points grouped by active set. Small groups join the group with which they make least
+ * work, padded with zeros, where that is less work than staying apart. Order: by body,
  * then by first appearance. Also tells each point's dominant part.
  */
 export function groupPoints(cells: readonly Cell[], basis: 4 | 10): { points: QuadraturePoints; dominant: Int32Array } {
@@ -77,7 +77,9 @@ function collect(cells: readonly Cell[]): Group[] {
 }
 
 function mergeSmall(groups: Group[]): Group[] {
-  const order = groups.map((group, n) => ({ group, n })).sort((a, b) => a.group.active.length - b.group.active.length || a.n - b.n);
+  const order = groups
+    .map((group, n) => ({ group, n }))
+    .sort((a, b) => a.group.active.length - b.group.active.length || a.n - b.n);
   const alive = order.map((o) => o.group);
   for (let s = 0; s < alive.length; s++) {
     const small = alive[s]!;
@@ -89,10 +91,12 @@ function mergeSmall(groups: Group[]): Group[] {
       const other = alive[t]!;
       const union = unionSize(small.active, other.active);
       // Work goes with the square of the active set.
-      const work = union * union * (small.cells.length + other.cells.length);
-      const before = small.active.length ** 2 * small.cells.length + other.active.length ** 2 * other.cells.length;
-      if (work > GROWTH * before) continue;
-      const cost = (work - before) / small.cells.length;
+      const work = union * union * (small.cells.length + other.cells.length + OVERHEAD);
+      const before =
+        small.active.length ** 2 * (small.cells.length + OVERHEAD) +
+        other.active.length ** 2 * (other.cells.length + OVERHEAD);
+      const cost = work - before;
+      if (cost >= 0) continue;
       if (cost < bestCost) {
         bestCost = cost;
         best = t;

@@ -1,6 +1,8 @@
 import { LATTICE_COS, LATTICE_SIN, type RayLattice } from './lattice';
 import type { TriangleSoup } from './soup';
 
+const SNAP = 2 ** 18;
+
 /** All hits of a lattice's rays, sorted along each ray. Ray s: hits start[s] … start[s+1]−1. */
 export interface RayHits {
   start: Int32Array;
@@ -13,9 +15,10 @@ export interface RayHits {
 
 /**
  * Casts every ray of the lattice against the listed triangles by rasterising each triangle over the
- * lattice (an integer grid in lattice coordinates). Tie rule: the edge function is always evaluated
- * from the lexicographically smaller end, so two triangles that share an edge agree bit for bit on
- * the side of a ray, and a ray exactly on the edge belongs to one of them only.
+ * lattice (an integer grid in lattice coordinates). Tie rule: corners are snapped to 2⁻¹⁸ of the
+ * spacing, which makes the edge functions exact in double precision; they are taken from the
+ * lexicographically smaller end and 0 counts as left, which is the same as moving every ray by an
+ * infinitesimal (−ε², ε). So triangles that share an edge or a corner never both claim a ray, nor both miss it.
  */
 export function castRays(lattice: RayLattice, soup: TriangleSoup, list: Int32Array): RayHits {
   const { positions: p, triangles, patch: patchOf } = soup;
@@ -44,12 +47,12 @@ export function castRays(lattice: RayLattice, soup: TriangleSoup, list: Int32Arr
     const v1 = p[i1 + v]! - lattice.originV;
     const u2 = p[i2 + u]! - lattice.originU;
     const v2 = p[i2 + v]! - lattice.originV;
-    const a0 = ca * u0 + sa * v0;
-    const b0 = cb * v0 - sb * u0;
-    const a1 = ca * u1 + sa * v1;
-    const b1 = cb * v1 - sb * u1;
-    const a2 = ca * u2 + sa * v2;
-    const b2 = cb * v2 - sb * u2;
+    const a0 = Math.round((ca * u0 + sa * v0) * SNAP) / SNAP;
+    const b0 = Math.round((cb * v0 - sb * u0) * SNAP) / SNAP;
+    const a1 = Math.round((ca * u1 + sa * v1) * SNAP) / SNAP;
+    const b1 = Math.round((cb * v1 - sb * u1) * SNAP) / SNAP;
+    const a2 = Math.round((ca * u2 + sa * v2) * SNAP) / SNAP;
+    const b2 = Math.round((cb * v2 - sb * u2) * SNAP) / SNAP;
     const loA = Math.max(Math.ceil(Math.min(a0, a1, a2)), minA);
     const hiA = Math.min(Math.floor(Math.max(a0, a1, a2)), minA + countA - 1);
     if (loA > hiA) continue;
