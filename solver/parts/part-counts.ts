@@ -30,7 +30,9 @@ export function splitParts(total: number, bodies: readonly BodySize[]): number[]
     counts[i]! += Math.floor(w);
     left -= Math.floor(w);
   });
-  const order = wanted.map((w, i) => ({ i, rest: share[i]! > 0 ? w - Math.floor(w) : -1 })).sort((a, b) => b.rest - a.rest || a.i - b.i);
+  const order = wanted
+    .map((w, i) => ({ i, rest: share[i]! > 0 ? w - Math.floor(w) : -1 }))
+    .sort((a, b) => b.rest - a.rest || a.i - b.i);
   for (let n = 0; left > 0; n = (n + 1) % order.length) {
     if (order[n]!.rest < 0) continue;
     counts[order[n]!.i]!++;

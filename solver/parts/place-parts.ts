@@ -26,7 +26,10 @@ export function partCentres(count: number, seeds: PartSeeds): Float64Array {
     let best = Infinity;
     let nearest = -1;
     for (let k = 0; k < inside.length; k += 3) {
-      const d2 = (inside[k]! - centres[o]!) ** 2 + (inside[k + 1]! - centres[o + 1]!) ** 2 + (inside[k + 2]! - centres[o + 2]!) ** 2;
+      const d2 =
+        (inside[k]! - centres[o]!) ** 2 +
+        (inside[k + 1]! - centres[o + 1]!) ** 2 +
+        (inside[k + 2]! - centres[o + 2]!) ** 2;
       if (d2 < best && !taken(centres, o, inside, k)) {
         best = d2;
         nearest = k;
@@ -45,7 +48,11 @@ function taken(centres: Float64Array, upTo: number, inside: Float64Array, k: num
 }
 
 /** Parts of all bodies from their centres; radii still 0. `reach` per body scales a lone part (m). */
-export function assembleParts(basis: 4 | 10, centresOfBodies: readonly Float64Array[], reach: readonly number[]): Parts {
+export function assembleParts(
+  basis: 4 | 10,
+  centresOfBodies: readonly Float64Array[],
+  reach: readonly number[],
+): Parts {
   const count = centresOfBodies.reduce((sum, c) => sum + c.length / 3, 0);
   const parts: Parts = {
     count,

@@ -29,7 +29,13 @@ const LEAST_POINTS = 12;
  * its L2 projection onto {1, x, y, z}, evaluated at four points of equal volume that carry the
  * cell's mean and covariance. Σ V ∇N over the points equals the fine sum exactly.
  */
-export function projectCells(fine: FinePoints, body: number, firstPart: number, partCount: number, field: BasisField): Cell[] {
+export function projectCells(
+  fine: FinePoints,
+  body: number,
+  firstPart: number,
+  partCount: number,
+  field: BasisField,
+): Cell[] {
   const dominant = dominantParts(fine, body, field);
   const cells: Cell[] = [];
   const perPart = field.basis === 10 ? CELLS_QUADRATIC : CELLS_LINEAR;
@@ -77,7 +83,12 @@ function withoutCrumbs(clusters: Clusters, points: Float64Array): Clusters {
 function dominantParts(fine: FinePoints, body: number, field: BasisField): Int32Array {
   const out = new Int32Array(fine.count);
   for (let k = 0; k < fine.count; k++) {
-    const n = field.evaluateWeights(fine.positions[3 * k]!, fine.positions[3 * k + 1]!, fine.positions[3 * k + 2]!, body);
+    const n = field.evaluateWeights(
+      fine.positions[3 * k]!,
+      fine.positions[3 * k + 1]!,
+      fine.positions[3 * k + 2]!,
+      body,
+    );
     let best = 0;
     for (let m = 1; m < n; m++) if (field.sample.weights[m]! > field.sample.weights[best]!) best = m;
     out[k] = field.sample.parts[best]!;
@@ -85,7 +96,13 @@ function dominantParts(fine: FinePoints, body: number, field: BasisField): Int32
   return out;
 }
 
-function projectCell(fine: FinePoints, members: readonly number[], body: number, part: number, field: BasisField): Cell {
+function projectCell(
+  fine: FinePoints,
+  members: readonly number[],
+  body: number,
+  part: number,
+  field: BasisField,
+): Cell {
   const { basis } = field;
   const { positions, volumes } = fine;
   let volume = 0;
@@ -152,9 +169,15 @@ function projectCell(fine: FinePoints, members: readonly number[], body: number,
   const points = new Float64Array(12);
   fourPoints(points, 0, centre, covariance, 1);
   const factor = Float64Array.of(
-    covariance[0]!, 0, 0,
-    covariance[3]!, covariance[1]!, 0,
-    covariance[5]!, covariance[4]!, covariance[2]!,
+    covariance[0]!,
+    0,
+    0,
+    covariance[3]!,
+    covariance[1]!,
+    0,
+    covariance[5]!,
+    covariance[4]!,
+    covariance[2]!,
   );
   factorSymmetric(factor, 3, 1e-12);
   // A crumb of a body shrunk to a point by round-off has no slope to fit.

@@ -77,7 +77,9 @@ function coverage(
     let hits = 0;
     for (let i = 0; i < LOOKS; i++) {
       const o = 3 * (from + Math.round((i * steps) / (LOOKS - 1)));
-      if (nearestOnEdge(nearest, edges, other, edges.points[o]!, edges.points[o + 1]!, edges.points[o + 2]!) <= tolerance) {
+      if (
+        nearestOnEdge(nearest, edges, other, edges.points[o]!, edges.points[o + 1]!, edges.points[o + 2]!) <= tolerance
+      ) {
         covered[i] = 1;
         hits++;
       }
@@ -89,7 +91,13 @@ function coverage(
   return total / LOOKS;
 }
 
-function joinNearest(edges: PatchEdges, edge: number, others: readonly number[], reach: number, parent: Int32Array): void {
+function joinNearest(
+  edges: PatchEdges,
+  edge: number,
+  others: readonly number[],
+  reach: number,
+  parent: Int32Array,
+): void {
   const distances = others.map((other) => gapBetween(edges, edge, other, reach));
   const least = Math.min(reach, ...distances);
   others.forEach((other, n) => {
@@ -160,7 +168,11 @@ function edgesNear(
     if (material[other >> 2] !== material[edge >> 2]) continue;
     let apart = false;
     for (let d = 0; d < 3; d++) {
-      if (boxes[6 * other + d]! > boxes[6 * edge + 3 + d]! + reach || boxes[6 * other + 3 + d]! < boxes[6 * edge + d]! - reach) apart = true;
+      if (
+        boxes[6 * other + d]! > boxes[6 * edge + 3 + d]! + reach ||
+        boxes[6 * other + 3 + d]! < boxes[6 * edge + d]! - reach
+      )
+        apart = true;
     }
     if (!apart) near.push(other);
   }

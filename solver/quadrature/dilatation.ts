@@ -6,7 +6,12 @@ import type { Body, DilatationGroups, Parts, QuadraturePoints } from './prepared
  * of its dominant part. The modes are {1, x, y, z} made orthonormal over the group with the points'
  * volumes (modified Gram–Schmidt); a mode without extent (all points in a plane) is zero.
  */
-export function dilatationGroups(points: QuadraturePoints, dominant: Int32Array, parts: Parts, bodies: readonly Body[]): DilatationGroups {
+export function dilatationGroups(
+  points: QuadraturePoints,
+  dominant: Int32Array,
+  parts: Parts,
+  bodies: readonly Body[],
+): DilatationGroups {
   const groupOfPart = new Int32Array(parts.count);
   const bodyOfGroup: number[] = [];
   bodies.forEach((body, b) => {
@@ -36,7 +41,10 @@ function orthonormalModes(out: Float64Array, o: number, members: readonly number
   members.forEach((k, n) => {
     for (let d = 0; d < 3; d++) centre[d]! += (volume[n]! * points.positions[3 * k + d]!) / total;
   });
-  const columns = [members.map(() => 1), ...[0, 1, 2].map((d) => members.map((k) => points.positions[3 * k + d]! - centre[d]!))];
+  const columns = [
+    members.map(() => 1),
+    ...[0, 1, 2].map((d) => members.map((k) => points.positions[3 * k + d]! - centre[d]!)),
+  ];
   const dot = (a: number[], b: number[]) => a.reduce((sum, x, n) => sum + volume[n]! * x * b[n]!, 0);
   const extent = Math.sqrt(Math.max(...columns.slice(1).map((c) => dot(c, c))));
   columns.forEach((column, m) => {

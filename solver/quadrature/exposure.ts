@@ -13,7 +13,15 @@ export function exposedSamples(places: SamplePlaces, pieces: readonly Piece[], d
     const y = places.positions[3 * s + 1]! + lift * places.normals[3 * s + 1]!;
     const z = places.positions[3 * s + 2]! + lift * places.normals[3 * s + 2]!;
     for (const { bounds, winding } of pieces) {
-      if (x < bounds.min[0]! || x > bounds.max[0]! || y < bounds.min[1]! || y > bounds.max[1]! || z < bounds.min[2]! || z > bounds.max[2]!) continue;
+      if (
+        x < bounds.min[0]! ||
+        x > bounds.max[0]! ||
+        y < bounds.min[1]! ||
+        y > bounds.max[1]! ||
+        z < bounds.min[2]! ||
+        z > bounds.max[2]!
+      )
+        continue;
       if (winding(x, y, z) > 0.5) {
         out[s] = 0;
         break;

@@ -12,7 +12,13 @@ import type { BlockPairs, BodyMatrices } from './prepared';
  * ∫ w_i w_j m dV for the monomials m of twice the degree (35 numbers instead of 100 products):
  * the block is their matrix times T_ijᵀ.
  */
-export function bodyMatrices(fine: FinePoints, body: number, firstPart: number, partCount: number, field: BasisField): BodyMatrices {
+export function bodyMatrices(
+  fine: FinePoints,
+  body: number,
+  firstPart: number,
+  partCount: number,
+  field: BasisField,
+): BodyMatrices {
   const { basis, parts } = field;
   const width = MONOMIALS[basis];
   const pairOf = new Int32Array(partCount * partCount).fill(-1);
@@ -74,7 +80,11 @@ export function bodyMatrices(fine: FinePoints, body: number, firstPart: number, 
     shiftMatrix(shift, parts, rows[p]!, columns[p]!);
     momentBlock(mass.values, n * size, basis, moments, p * width, shift);
   });
-  const stabilisation: BlockPairs = { rows: mass.rows.slice(), columns: mass.columns.slice(), values: mass.values.map((v) => -v) };
+  const stabilisation: BlockPairs = {
+    rows: mass.rows.slice(),
+    columns: mass.columns.slice(),
+    values: mass.values.map((v) => -v),
+  };
   const block = new Float64Array(size);
   for (let p = 0; p < order.length; p++) {
     const part = mass.rows[p]!;

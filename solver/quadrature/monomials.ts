@@ -30,7 +30,9 @@ const numberOf = (e: Exponents): number => ALL.findIndex((a) => a[0] === e[0] &&
 
 /** Monomial q is monomial PARENT[q] times coordinate FACTOR[q]. */
 const FACTOR = Int32Array.from(ALL, (e) => (e[0] > 0 ? 0 : e[1] > 0 ? 1 : 2));
-const PARENT = Int32Array.from(ALL, (e, q) => (q === 0 ? 0 : numberOf(e.map((x, d) => (d === FACTOR[q] ? x - 1 : x)) as unknown as Exponents)));
+const PARENT = Int32Array.from(ALL, (e, q) =>
+  q === 0 ? 0 : numberOf(e.map((x, d) => (d === FACTOR[q] ? x - 1 : x)) as unknown as Exponents),
+);
 /** Number of the monomial p_a p_b, at [10 a + b]. */
 const PRODUCT = Int32Array.from({ length: 100 }, (_, n) => {
   const a = BASIS[Math.floor(n / 10)]!;
@@ -75,7 +77,14 @@ function term(n: number, k: number, s: number, t: number): number {
 }
 
 /** out[o …] = Σ_c ∫ p_a p_c · T_bc: the block of a pair from its moments. */
-export function momentBlock(out: Float64Array, o: number, basis: 4 | 10, moments: Float64Array, m: number, shift: Float64Array): void {
+export function momentBlock(
+  out: Float64Array,
+  o: number,
+  basis: 4 | 10,
+  moments: Float64Array,
+  m: number,
+  shift: Float64Array,
+): void {
   for (let a = 0; a < basis; a++) {
     for (let b = 0; b < basis; b++) {
       let sum = 0;

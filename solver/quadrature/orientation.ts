@@ -14,7 +14,10 @@ const RAYS_ACROSS = 28;
 export function inwardPatches(soup: TriangleSoup, components: Components, patchCount: number): Uint8Array {
   const votes = new Float64Array(patchCount);
   for (let c = 0; c < components.count; c++) {
-    const list = trianglesOf(soup, Uint8Array.from(components.of, (of) => (of === c ? 1 : 0)));
+    const list = trianglesOf(
+      soup,
+      Uint8Array.from(components.of, (of) => (of === c ? 1 : 0)),
+    );
     if (list.length === 0) continue;
     const bounds = boundsOf(soup, list);
     for (let axis = 0; axis < 3; axis++) {

@@ -39,7 +39,11 @@ export function patchEdges(patches: readonly Patch[], diagonal: number): PatchEd
         points.push(local[0]!, local[1]!, local[2]!);
         if (i > 0) {
           const o = points.length - 6;
-          lengths[4 * k + e]! += Math.hypot(points[o + 3]! - points[o]!, points[o + 4]! - points[o + 1]!, points[o + 5]! - points[o + 2]!);
+          lengths[4 * k + e]! += Math.hypot(
+            points[o + 3]! - points[o]!,
+            points[o + 4]! - points[o + 1]!,
+            points[o + 5]! - points[o + 2]!,
+          );
         }
       }
       start[4 * k + e + 1] = points.length / 3;
@@ -59,7 +63,8 @@ function across(local: Float64Array, e: number): [number, number, number] {
   const cross = e < 2 ? 6 : 3;
   const side = e % 2 === 0 ? -1 : 1;
   const l2 = local[along]! ** 2 + local[along + 1]! ** 2 + local[along + 2]! ** 2;
-  const dot = local[along]! * local[cross]! + local[along + 1]! * local[cross + 1]! + local[along + 2]! * local[cross + 2]!;
+  const dot =
+    local[along]! * local[cross]! + local[along + 1]! * local[cross + 1]! + local[along + 2]! * local[cross + 2]!;
   const share = l2 > 0 ? dot / l2 : 0;
   const out = [0, 1, 2].map((d) => side * (local[cross + d]! - share * local[along + d]!));
   const length = Math.hypot(out[0]!, out[1]!, out[2]!);
@@ -67,7 +72,14 @@ function across(local: Float64Array, e: number): [number, number, number] {
 }
 
 /** Nearest place of an edge's polyline into out[0..2], the number of its nearer end into out[3]; returns the distance, m. */
-export function nearestOnEdge(out: Float64Array, edges: PatchEdges, edge: number, x: number, y: number, z: number): number {
+export function nearestOnEdge(
+  out: Float64Array,
+  edges: PatchEdges,
+  edge: number,
+  x: number,
+  y: number,
+  z: number,
+): number {
   const { points: p, start } = edges;
   let best = Infinity;
   for (let i = start[edge]!; i + 1 < start[edge + 1]!; i++) {

@@ -33,7 +33,12 @@ export function findPieces(soup: TriangleSoup, components: Components, material:
   const probes: Scatter[] = [];
   const materialOf = new Int32Array(count);
   for (let c = 0; c < count; c++) {
-    lists.push(trianglesOf(soup, Uint8Array.from(components.of, (of) => (of === c ? 1 : 0))));
+    lists.push(
+      trianglesOf(
+        soup,
+        Uint8Array.from(components.of, (of) => (of === c ? 1 : 0)),
+      ),
+    );
     boxes.push(boundsOf(soup, lists[c]!));
     trees.push(buildWindingTree(soup, lists[c]!));
     probes.push(scatterOnTriangles(soup, lists[c]!, lists[c]!.length === 0 ? 0 : PROBES));
@@ -51,7 +56,9 @@ export function findPieces(soup: TriangleSoup, components: Components, material:
   for (let c = 0; c < count; c++) if (find(parent, c) === c && lists[c]!.length > 0) roots.push(c);
   roots.sort((a, b) => materialOf[a]! - materialOf[b]! || a - b);
   return roots.map((root) => {
-    const members = Array.from({ length: count }, (_, c) => c).filter((c) => find(parent, c) === root && lists[c]!.length > 0);
+    const members = Array.from({ length: count }, (_, c) => c).filter(
+      (c) => find(parent, c) === root && lists[c]!.length > 0,
+    );
     const inside = Uint8Array.from(components.of, (of) => (members.includes(of) ? 1 : 0));
     const triangles = trianglesOf(soup, inside);
     const patches: number[] = [];
@@ -86,7 +93,8 @@ function runsInto(probes: Scatter, tree: WindingTree, box: Bounds): boolean {
     const x = probes.positions[3 * k]!;
     const y = probes.positions[3 * k + 1]!;
     const z = probes.positions[3 * k + 2]!;
-    if (x < box.min[0]! || x > box.max[0]! || y < box.min[1]! || y > box.max[1]! || z < box.min[2]! || z > box.max[2]!) continue;
+    if (x < box.min[0]! || x > box.max[0]! || y < box.min[1]! || y > box.max[1]! || z < box.min[2]! || z > box.max[2]!)
+      continue;
     if (windingNumber(tree, x, y, z) > WELL_INSIDE) return true;
   }
   return false;

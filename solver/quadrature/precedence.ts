@@ -27,6 +27,7 @@ export function overlapOrder(soup: TriangleSoup, pieces: readonly Piece[]): numb
 function swallowed(soup: TriangleSoup, piece: Piece, other: Piece): boolean {
   const { positions } = scatterOnTriangles(soup, piece.triangles, PROBES);
   let inside = 0;
-  for (let o = 0; o < positions.length; o += 3) if (other.winding(positions[o]!, positions[o + 1]!, positions[o + 2]!) > 0.5) inside++;
+  for (let o = 0; o < positions.length; o += 3)
+    if (other.winding(positions[o]!, positions[o + 1]!, positions[o + 2]!) > 0.5) inside++;
   return inside >= SWALLOWED * PROBES;
 }

@@ -33,7 +33,11 @@ import { findTies, tieRows } from './ties';
  * the same input gives the same bits, times in the report apart. Pieces of one material that run
  * into each other are one body; who wins where unlike materials overlap, see overlapOrder.
  */
-export function prepare(scene: Scene, patches: readonly Patch[], onProgress?: (stage: string, share: number) => void): Prepared {
+export function prepare(
+  scene: Scene,
+  patches: readonly Patch[],
+  onProgress?: (stage: string, share: number) => void,
+): Prepared {
   const clock = new StageClock(onProgress);
   const remarks: string[] = [];
   if (patches.length === 0) throw new RangeError('The model has no patches. Choose a file with surfaces in it.');
@@ -53,7 +57,8 @@ export function prepare(scene: Scene, patches: readonly Patch[], onProgress?: (s
 
   const thickness = SHEET_THICKNESS * extent.diagonal;
   const { solids, lost } = findSolids(scene, soup, facing, found, thickness);
-  if (solids.length === 0) throw new RangeError('Nothing in the model has a surface or an inside. Choose another file.');
+  if (solids.length === 0)
+    throw new RangeError('Nothing in the model has a surface or an inside. Choose another file.');
   const pieces = solids.map((solid) => solid.piece);
   remarks.push(...pieceRemarks({ turned, solids, lost, thickness }));
   clock.mark('inside', 0.5);
@@ -124,7 +129,9 @@ function placeParts(scene: Scene, soup: TriangleSoup, solids: readonly Solid[]):
       contains: (x, y, z) => sheet || piece.winding(x, y, z) >= 0.5,
     }),
   );
-  const reach = solids.map(({ piece: { bounds } }) => 0.5 * Math.hypot(...[0, 1, 2].map((d) => bounds.max[d]! - bounds.min[d]!)));
+  const reach = solids.map(
+    ({ piece: { bounds } }) => 0.5 * Math.hypot(...[0, 1, 2].map((d) => bounds.max[d]! - bounds.min[d]!)),
+  );
   return assembleParts(scene.parts.order === 'quadratic' ? 10 : 4, centres, reach);
 }
 

@@ -34,10 +34,22 @@ export function refit(from: Prepared, coefficients: ArrayLike<number>, to: Prepa
   const area = samples.areas.reduce((a, b) => a + b, 0) || 1;
   const volume = points.volumes.reduce((a, b) => a + b, 0) || 1;
   for (let k = 0; k < points.count; k++) {
-    add(points.positions[3 * k]!, points.positions[3 * k + 1]!, points.positions[3 * k + 2]!, points.body[k]!, points.volumes[k]! / volume);
+    add(
+      points.positions[3 * k]!,
+      points.positions[3 * k + 1]!,
+      points.positions[3 * k + 2]!,
+      points.body[k]!,
+      points.volumes[k]! / volume,
+    );
   }
   for (let s = 0; s < samples.count; s++) {
-    add(samples.positions[3 * s]!, samples.positions[3 * s + 1]!, samples.positions[3 * s + 2]!, samples.body[s]!, samples.areas[s]! / area);
+    add(
+      samples.positions[3 * s]!,
+      samples.positions[3 * s + 1]!,
+      samples.positions[3 * s + 2]!,
+      samples.body[s]!,
+      samples.areas[s]! / area,
+    );
   }
 
   const out = new Float64Array(3 * count * basis);

@@ -43,9 +43,14 @@ export interface PieceFindings {
 /** What the person should know about sides, open pieces and patches that take no part. */
 export function pieceRemarks({ turned, solids, lost, thickness }: PieceFindings): string[] {
   const remarks: string[] = [];
-  const used = solids.reduce((n, { piece }) => n + piece.patches.length, 0) + lost.reduce((n, piece) => n + piece.patches.length, 0);
+  const used =
+    solids.reduce((n, { piece }) => n + piece.patches.length, 0) +
+    lost.reduce((n, piece) => n + piece.patches.length, 0);
   const flat = turned.length - used;
-  if (flat > 0) remarks.push(`${flat} of ${turned.length} patches ${flat === 1 ? 'has no area and takes' : 'have no area and take'} no part.`);
+  if (flat > 0)
+    remarks.push(
+      `${flat} of ${turned.length} patches ${flat === 1 ? 'has no area and takes' : 'have no area and take'} no part.`,
+    );
   if (lost.length > 0) {
     remarks.push(`Patches ${patchList(lost)} lie wholly inside other materials and take no part.`);
   }
@@ -74,5 +79,7 @@ function patchList(pieces: readonly Piece[]): string {
 
 function lengthText(metres: number): string {
   if (metres >= 1) return `${Number(metres.toPrecision(3))} m`;
-  return metres >= 0.01 ? `${Number((100 * metres).toPrecision(3))} cm` : `${Number((1000 * metres).toPrecision(3))} mm`;
+  return metres >= 0.01
+    ? `${Number((100 * metres).toPrecision(3))} cm`
+    : `${Number((1000 * metres).toPrecision(3))} mm`;
 }

@@ -39,7 +39,10 @@ export class RowBuilder {
       const g = 3 * m * basis;
       const o = (this.entries + m) * basis;
       for (let a = 0; a < basis; a++) {
-        values[o + a] = tx * field.gradients[g + a]! + ty * field.gradients[g + basis + a]! + tz * field.gradients[g + 2 * basis + a]!;
+        values[o + a] =
+          tx * field.gradients[g + a]! +
+          ty * field.gradients[g + basis + a]! +
+          tz * field.gradients[g + 2 * basis + a]!;
       }
     }
     this.close(n);

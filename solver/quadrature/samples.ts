@@ -109,7 +109,12 @@ function patchSize(patch: Patch, evaluator: PatchEvaluator): { area: number; len
  * Adds the basis rows: values, and slopes along two tangents t1, t2 (m) with t1 × t2 = normal · area.
  * `exposed` tells, sample by sample, whether it is on the outside of everything.
  */
-export function surfaceSamples(places: SamplePlaces, bodyOfPatch: Int32Array, exposed: Uint8Array, field: BasisField): SurfaceSamples {
+export function surfaceSamples(
+  places: SamplePlaces,
+  bodyOfPatch: Int32Array,
+  exposed: Uint8Array,
+  field: BasisField,
+): SurfaceSamples {
   const { count, positions, normals, areas } = places;
   const rows = new RowBuilder(field.basis, count);
   const tangent1 = new RowBuilder(field.basis, count);

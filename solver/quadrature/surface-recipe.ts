@@ -59,16 +59,21 @@ export function surfaceFromRecipe(patches: readonly Patch[], recipe: Uint8Array)
   if (recipe.byteLength < HEADER || view.getUint32(0, true) !== MAGIC) {
     throw new RangeError('These bytes are not a surface recipe. Bake the scene again.');
   }
-  const [, version, basis, partCount, bodyCount, patchCount, vertexBudget] = Array.from({ length: 7 }, (_, n) => view.getUint32(4 * n, true)) as [
-    number, number, number, number, number, number, number,
-  ];
-  if (version !== VERSION) throw new RangeError(`This surface recipe has version ${version}; version ${VERSION} is read here. Bake the scene again.`);
+  const [, version, basis, partCount, bodyCount, patchCount, vertexBudget] = Array.from({ length: 7 }, (_, n) =>
+    view.getUint32(4 * n, true),
+  ) as [number, number, number, number, number, number, number];
+  if (version !== VERSION)
+    throw new RangeError(
+      `This surface recipe has version ${version}; version ${VERSION} is read here. Bake the scene again.`,
+    );
   const size = HEADER + 8 * (1 + 5 * partCount) + 8 * bodyCount + 5 * patchCount;
   if (recipe.byteLength !== size || (basis !== 4 && basis !== 10)) {
     throw new RangeError('This surface recipe is damaged. Bake the scene again.');
   }
   if (patchCount !== patches.length) {
-    throw new RangeError(`The recipe is for ${patchCount} patches and the model has ${patches.length}. Open the model the run was made with.`);
+    throw new RangeError(
+      `The recipe is for ${patchCount} patches and the model has ${patches.length}. Open the model the run was made with.`,
+    );
   }
   let at = HEADER;
   const float = () => {

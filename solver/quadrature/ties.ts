@@ -48,7 +48,8 @@ export function findTies(
       const [winner, other] = yields[b]!.includes(a) ? [a, b] : [b, a];
       let found = unlike ? probe(soup, pieces[winner]!, pieces[other]!, reach, true) : [];
       if (found.length === 0) {
-        const [small, large] = areaOf(soup, pieces[a]!.triangles) < areaOf(soup, pieces[b]!.triangles) ? [a, b] : [b, a];
+        const [small, large] =
+          areaOf(soup, pieces[a]!.triangles) < areaOf(soup, pieces[b]!.triangles) ? [a, b] : [b, a];
         found = probe(soup, pieces[small]!, pieces[large]!, reach, false);
       }
       for (const { x, y, z, area } of found) {
@@ -86,7 +87,12 @@ function probe(soup: TriangleSoup, piece: Piece, other: Piece, reach: number, in
     for (let o = 0; o < places.length; o += 3) {
       const [x, y, z] = [places[o]!, places[o + 1]!, places[o + 2]!];
       if (nearestOnTriangles(nearest, grid, x, y, z) < Infinity) {
-        found.push({ x: 0.5 * (x + nearest[0]!), y: 0.5 * (y + nearest[1]!), z: 0.5 * (z + nearest[2]!), area: area / count });
+        found.push({
+          x: 0.5 * (x + nearest[0]!),
+          y: 0.5 * (y + nearest[1]!),
+          z: 0.5 * (z + nearest[2]!),
+          area: area / count,
+        });
       } else if (inside && other.winding(x, y, z) > 0.5) {
         found.push({ x, y, z, area: area / count });
       }
@@ -110,5 +116,12 @@ export function tieRows(places: TiePlaces, field: BasisField): Ties {
     field.evaluate(x, y, z, places.bodyB[t]!, false);
     b.pushValues(field);
   }
-  return { count: places.count, a: a.done(), b: b.done(), areas: places.areas, bodyA: places.bodyA, bodyB: places.bodyB };
+  return {
+    count: places.count,
+    a: a.done(),
+    b: b.done(),
+    areas: places.areas,
+    bodyA: places.bodyA,
+    bodyB: places.bodyB,
+  };
 }

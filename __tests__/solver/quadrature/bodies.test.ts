@@ -16,7 +16,10 @@ describe('pieces', () => {
     const { bodies, parts, samples, ties } = prepare(plainScene(12), patchesOf(plate, block(gap)));
     expect(bodies.map((b) => Array.from(b.patches))).toEqual([sixFrom(0), sixFrom(6)]);
     expect(bodies[0]!.partCount + bodies[1]!.partCount).toBe(12);
-    expect(Array.from(parts.body)).toEqual([...Array<number>(bodies[0]!.partCount).fill(0), ...Array<number>(bodies[1]!.partCount).fill(1)]);
+    expect(Array.from(parts.body)).toEqual([
+      ...Array<number>(bodies[0]!.partCount).fill(0),
+      ...Array<number>(bodies[1]!.partCount).fill(1),
+    ]);
     expect(Math.abs(bodies[1]!.volume - (0.6 - gap))).toBeLessThan(0.003);
     expect(Array.from(samples.body)).toEqual(Array.from(samples.patch, (k) => (k < 6 ? 0 : 1)));
     expect(ties.count).toBe(0);
@@ -27,7 +30,10 @@ describe('pieces', () => {
   });
 
   test('loose-faced boxes side by side stay two bodies', () => {
-    const { bodies } = prepare(plainScene(8), patchesOf(box([0, 0, 0], [1, 1, 1], 0.02), box([1.5, 0, 0], [2.5, 1, 1], 0.02)));
+    const { bodies } = prepare(
+      plainScene(8),
+      patchesOf(box([0, 0, 0], [1, 1, 1], 0.02), box([1.5, 0, 0], [2.5, 1, 1], 0.02)),
+    );
     expect(bodies).toHaveLength(2);
   });
 
@@ -49,7 +55,10 @@ describe('pieces', () => {
 describe('materials', () => {
   const outer = box([0, 0, 0], [1, 1, 1]);
   const core = box([0.3, 0.3, 0.3], [0.7, 0.7, 0.7]);
-  const prepared = prepare(plainScene(12, { materials: [rubber, { ...steel, patches: sixFrom(6) }] }), patchesOf(outer, core));
+  const prepared = prepare(
+    plainScene(12, { materials: [rubber, { ...steel, patches: sixFrom(6) }] }),
+    patchesOf(outer, core),
+  );
 
   test('a core of a later material is cut out of the body round it', () => {
     const { bodies } = prepared;
@@ -77,7 +86,10 @@ describe('materials', () => {
   });
 
   test('a core is cut out of the body round it also when its material comes first', () => {
-    const { bodies, ties } = prepare(plainScene(12, { materials: [{ ...steel, patches: sixFrom(6) }, rubber] }), patchesOf(outer, core));
+    const { bodies, ties } = prepare(
+      plainScene(12, { materials: [{ ...steel, patches: sixFrom(6) }, rubber] }),
+      patchesOf(outer, core),
+    );
     expect(bodies.map((b) => Array.from(b.patches))).toEqual([sixFrom(6), sixFrom(0)]);
     expect(Math.abs(bodies[0]!.volume / 0.064 - 1)).toBeLessThan(0.005);
     expect(Math.abs(bodies[1]!.volume / (1 - 0.064) - 1)).toBeLessThan(0.005);
@@ -105,7 +117,15 @@ describe('materials', () => {
   });
 
   test('patches nobody claims take the first material, with a remark', () => {
-    const { bodies, report } = prepare(plainScene(4, { materials: [{ ...foam, patches: [0] }, { ...rubber, patches: [1] }] }), patchesOf(outer));
+    const { bodies, report } = prepare(
+      plainScene(4, {
+        materials: [
+          { ...foam, patches: [0] },
+          { ...rubber, patches: [1] },
+        ],
+      }),
+      patchesOf(outer),
+    );
     expect(bodies.map((b) => b.material)).toContain(0);
     expect(report.remarks[0]).toBe('4 of 6 patches have no material; they take “Foam”.');
   });
@@ -122,7 +142,9 @@ describe('materials', () => {
     const { bodies, report } = prepare(plainScene(4), [...patches, point]);
     expect(bodies.map((b) => Array.from(b.patches))).toEqual([sixFrom(0)]);
     expect(report.remarks).toEqual(['1 of 7 patches has no area and takes no part.']);
-    expect(() => prepare(plainScene(4), [point])).toThrow('The model has no size: all its points are one. Choose another file.');
+    expect(() => prepare(plainScene(4), [point])).toThrow(
+      'The model has no size: all its points are one. Choose another file.',
+    );
   });
 
   test('a model without patches is refused', () => {
@@ -139,7 +161,9 @@ describe('sheets', () => {
     expect(bodies).toHaveLength(1);
     expect(parts.count).toBe(6);
     expect(Math.abs(bodies[0]!.volume / (0.5 * thickness) - 1)).toBeLessThan(1e-12);
-    expect(report.remarks).toEqual(["One piece encloses nothing and is treated as a sheet 1.12 cm thick, 1 % of the model's diagonal: patches 0."]);
+    expect(report.remarks).toEqual([
+      "One piece encloses nothing and is treated as a sheet 1.12 cm thick, 1 % of the model's diagonal: patches 0.",
+    ]);
   });
 
   test('its second moment through the thickness is that of the solid plate, V t²/12', () => {

@@ -22,8 +22,36 @@ function bent({ parts }: Prepared, curvature: number): Float64Array {
     const ox = 3 * i * 10;
     const oz = ox + 20;
     // Taylor series to second order of (r sin κx, r cos κx) at the centre.
-    out.set([r * s, curvature * r * c * h, 0, s * h, -0.5 * curvature ** 2 * r * s * h * h, 0, 0, 0, 0, curvature * c * h * h], ox);
-    out.set([r * c, -curvature * r * s * h, 0, c * h, -0.5 * curvature ** 2 * r * c * h * h, 0, 0, 0, 0, -curvature * s * h * h], oz);
+    out.set(
+      [
+        r * s,
+        curvature * r * c * h,
+        0,
+        s * h,
+        -0.5 * curvature ** 2 * r * s * h * h,
+        0,
+        0,
+        0,
+        0,
+        curvature * c * h * h,
+      ],
+      ox,
+    );
+    out.set(
+      [
+        r * c,
+        -curvature * r * s * h,
+        0,
+        c * h,
+        -0.5 * curvature ** 2 * r * c * h * h,
+        0,
+        0,
+        0,
+        0,
+        -curvature * s * h * h,
+      ],
+      oz,
+    );
   }
   return out;
 }
@@ -55,7 +83,10 @@ describe('refit', () => {
 });
 
 describe('surface recipe', () => {
-  const patches = [...barPatches.map((p, k) => (k === 2 ? flipPatch(p) : p)), ...patchesOf({ kind: 'torus', centre: [3, 0, 0], axis: [0, 1, 1], majorRadius: 0.5, minorRadius: 0.1 })];
+  const patches = [
+    ...barPatches.map((p, k) => (k === 2 ? flipPatch(p) : p)),
+    ...patchesOf({ kind: 'torus', centre: [3, 0, 0], axis: [0, 1, 1], majorRadius: 0.5, minorRadius: 0.1 }),
+  ];
   const prepared = prepare(plainScene(14), patches);
 
   test('gives the same surface again to the bit, in a few kilobytes', () => {
@@ -69,9 +100,15 @@ describe('surface recipe', () => {
 
   test('refuses bytes that are no recipe, damaged ones, and another model', () => {
     const recipe = surfaceRecipe(prepared);
-    expect(() => surfaceFromRecipe(patches, new Uint8Array(64))).toThrow('These bytes are not a surface recipe. Bake the scene again.');
-    expect(() => surfaceFromRecipe(patches, recipe.subarray(0, recipe.length - 1))).toThrow('This surface recipe is damaged. Bake the scene again.');
-    expect(() => surfaceFromRecipe(barPatches, recipe)).toThrow('The recipe is for 7 patches and the model has 6. Open the model the run was made with.');
+    expect(() => surfaceFromRecipe(patches, new Uint8Array(64))).toThrow(
+      'These bytes are not a surface recipe. Bake the scene again.',
+    );
+    expect(() => surfaceFromRecipe(patches, recipe.subarray(0, recipe.length - 1))).toThrow(
+      'This surface recipe is damaged. Bake the scene again.',
+    );
+    expect(() => surfaceFromRecipe(barPatches, recipe)).toThrow(
+      'The recipe is for 7 patches and the model has 6. Open the model the run was made with.',
+    );
   });
 });
 
@@ -94,8 +131,14 @@ describe('regions', () => {
   const positions = (list: Int32Array, d: number) => Array.from(list, (s) => samples.positions[3 * s + d]!);
 
   test('a plane without tolerance takes exactly the samples of the face in it', () => {
-    const face = samplesInRegion(samples, { kind: 'plane', point: [1, 0, 0], normal: [2, 0, 0], tolerance: 0 }, report.diagonal);
-    expect(Array.from(face)).toEqual(Array.from({ length: samples.count }, (_, s) => s).filter((s) => samples.patch[s] === 1));
+    const face = samplesInRegion(
+      samples,
+      { kind: 'plane', point: [1, 0, 0], normal: [2, 0, 0], tolerance: 0 },
+      report.diagonal,
+    );
+    expect(Array.from(face)).toEqual(
+      Array.from({ length: samples.count }, (_, s) => s).filter((s) => samples.patch[s] === 1),
+    );
   });
 
   test('box, sphere, patches and all', () => {
@@ -103,7 +146,8 @@ describe('regions', () => {
     expect(inBox.length).toBeGreaterThan(50);
     positions(inBox, 0).forEach((x) => expect(x >= 0.4 && x <= 0.6).toBe(true));
     const near = samplesInRegion(samples, { kind: 'sphere', centre: [0, 0, 0], radius: 0.2 }, report.diagonal);
-    for (const s of near) expect(Math.hypot(...[0, 1, 2].map((d) => samples.positions[3 * s + d]!))).toBeLessThanOrEqual(0.2);
+    for (const s of near)
+      expect(Math.hypot(...[0, 1, 2].map((d) => samples.positions[3 * s + d]!))).toBeLessThanOrEqual(0.2);
     expect(near.length).toBeGreaterThan(0);
     const two = samplesInRegion(samples, { kind: 'patches', patches: [0, 3] }, report.diagonal);
     for (const s of two) expect([0, 3]).toContain(samples.patch[s]);
@@ -112,6 +156,12 @@ describe('regions', () => {
 
   test('the nearest sample to a corner is within a cell of it', () => {
     const s = nearestSample(samples, [1, 0.1, 0.1]);
-    expect(Math.hypot(samples.positions[3 * s]! - 1, samples.positions[3 * s + 1]! - 0.1, samples.positions[3 * s + 2]! - 0.1)).toBeLessThan(0.05);
+    expect(
+      Math.hypot(
+        samples.positions[3 * s]! - 1,
+        samples.positions[3 * s + 1]! - 0.1,
+        samples.positions[3 * s + 2]! - 0.1,
+      ),
+    ).toBeLessThan(0.05);
   });
 });

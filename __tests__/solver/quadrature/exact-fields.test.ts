@@ -2,7 +2,16 @@ import { prepare } from '../../../solver/quadrature/prepare';
 import type { Prepared } from '../../../solver/quadrature/prepared';
 import { restCoefficients } from '../../../solver/quadrature/rest';
 import { evaluateRows } from '../../../solver/quadrature/rows';
-import { box, deformationGradients, furthest, patchesOf, plainScene, quadratic, quadraticCoefficients, vectorAt } from './test-scenes';
+import {
+  box,
+  deformationGradients,
+  furthest,
+  patchesOf,
+  plainScene,
+  quadratic,
+  quadraticCoefficients,
+  vectorAt,
+} from './test-scenes';
 
 /**
  * Patch test of the interpolation: a partition of unity over quadratics reproduces every global
@@ -14,7 +23,13 @@ const TOLERANCE = 1e-10;
 const cases: [string, Prepared][] = [
   ['a box', prepare(plainScene(24), patchesOf(box([0, 0, 0], [1, 0.1, 0.1])))],
   ['six loose box faces', prepare(plainScene(24), patchesOf(box([0, 0, 0], [1, 0.2, 0.2], 0.004)))],
-  ['a torus', prepare(plainScene(20), patchesOf({ kind: 'torus', centre: [0.1, 0, 0], axis: [1, 2, 2], majorRadius: 0.4, minorRadius: 0.12 }))],
+  [
+    'a torus',
+    prepare(
+      plainScene(20),
+      patchesOf({ kind: 'torus', centre: [0.1, 0, 0], axis: [1, 2, 2], majorRadius: 0.4, minorRadius: 0.12 }),
+    ),
+  ],
   ['one part', prepare(plainScene(1), patchesOf({ kind: 'sphere', centre: [0, 0, 0], radius: 0.5 }))],
 ];
 
@@ -38,7 +53,8 @@ describe.each(cases)('a quadratic field on %s', (_name, prepared) => {
     let worst = 0;
     for (let k = 0; k < points.count; k++) {
       const expected = quadratic.gradient(vectorAt(points.positions, k));
-      for (let d = 0; d < 3; d++) for (let e = 0; e < 3; e++) worst = Math.max(worst, Math.abs(gradients[9 * k + 3 * d + e]! - expected[d]![e]!));
+      for (let d = 0; d < 3; d++)
+        for (let e = 0; e < 3; e++) worst = Math.max(worst, Math.abs(gradients[9 * k + 3 * d + e]! - expected[d]![e]!));
     }
     expect(worst).toBeLessThan(TOLERANCE);
   });
@@ -57,7 +73,8 @@ describe.each(cases)('a quadratic field on %s', (_name, prepared) => {
       const b = vectorAt(t2, s);
       const cross = [a[1] * b[2] - a[2] * b[1], a[2] * b[0] - a[0] * b[2], a[0] * b[1] - a[1] * b[0]];
       for (let d = 0; d < 3; d++) {
-        const dot = (t: readonly number[]) => gradient[d]![0] * t[0]! + gradient[d]![1] * t[1]! + gradient[d]![2] * t[2]!;
+        const dot = (t: readonly number[]) =>
+          gradient[d]![0] * t[0]! + gradient[d]![1] * t[1]! + gradient[d]![2] * t[2]!;
         worst = Math.max(worst, Math.abs(along1[3 * s + d]! - dot(a)), Math.abs(along2[3 * s + d]! - dot(b)));
         worst = Math.max(worst, Math.abs(cross[d]! - samples.normals[3 * s + d]! * samples.areas[s]!));
       }
@@ -74,7 +91,10 @@ describe.each(cases)('a quadratic field on %s', (_name, prepared) => {
 });
 
 test('linear parts reproduce linear fields', () => {
-  const prepared = prepare(plainScene(12, { parts: { count: 12, order: 'linear' } }), patchesOf(box([0, 0, 0], [1, 0.3, 0.2])));
+  const prepared = prepare(
+    plainScene(12, { parts: { count: 12, order: 'linear' } }),
+    patchesOf(box([0, 0, 0], [1, 0.3, 0.2])),
+  );
   const { parts } = prepared;
   expect(parts.basis).toBe(4);
   const coefficients = restCoefficients(prepared);

@@ -14,7 +14,10 @@ if (missing) console.log(`Sample models are not at ${folder}; these tests are sk
 /** Largest difference of F from the identity at rest. */
 function unrest(prepared: Prepared): number {
   const gradients = deformationGradients(prepared, restCoefficients(prepared));
-  return gradients.reduce((worst, f, n) => Math.max(worst, Math.abs(f - (n % 9 === 0 || n % 9 === 4 || n % 9 === 8 ? 1 : 0))), 0);
+  return gradients.reduce(
+    (worst, f, n) => Math.max(worst, Math.abs(f - (n % 9 === 0 || n % 9 === 4 || n % 9 === 8 ? 1 : 0))),
+    0,
+  );
 }
 
 (missing ? describe.skip : describe)('models of other people', () => {
@@ -28,7 +31,8 @@ function unrest(prepared: Prepared): number {
     expect(unrest(prepared)).toBeLessThan(1e-10);
     const { samples } = prepared;
     let flux = 0;
-    for (let n = 0; n < 3 * samples.count; n++) flux += (samples.positions[n]! * samples.normals[n]! * samples.areas[Math.floor(n / 3)]!) / 3;
+    for (let n = 0; n < 3 * samples.count; n++)
+      flux += (samples.positions[n]! * samples.normals[n]! * samples.areas[Math.floor(n / 3)]!) / 3;
     // Handle and spout reach into the body without trimming, so the flux counts their ends twice.
     expect(Math.abs(flux / prepared.report.volume - 1)).toBeLessThan(0.1);
   });

@@ -32,18 +32,29 @@ test.each([0, 1, 2])('rays along axis %i through shared corners and edges hit on
   const triangles: number[] = [];
   for (let a = 0; a + 1 < lattice.countA; a++) {
     for (let b = 0; b + 1 < lattice.countB; b++) {
-      const [p, q, r, s] = [[a, b], [a + 1, b], [a + 1, b + 1], [a, b + 1]].map((k) => number.get(k.join(','))!);
+      const [p, q, r, s] = [
+        [a, b],
+        [a + 1, b],
+        [a + 1, b + 1],
+        [a, b + 1],
+      ].map((k) => number.get(k.join(','))!);
       triangles.push(p!, q!, r!, p!, r!, s!);
     }
   }
-  const soup = { positions: Float64Array.from(positions), triangles: Int32Array.from(triangles), patch: new Int32Array(triangles.length / 3) };
+  const soup = {
+    positions: Float64Array.from(positions),
+    triangles: Int32Array.from(triangles),
+    patch: new Int32Array(triangles.length / 3),
+  };
   const hits = castRays(lattice, soup, all(soup));
   expect(sites.length).toBeGreaterThan(100);
   expect(sites.map((site) => hits.start[site + 1]! - hits.start[site]!)).toEqual(sites.map(() => 1));
 });
 
 test('hits come in order along the ray, in and out by turns through a closed body', () => {
-  const soup = patchSoup(patchesOf({ kind: 'torus', centre: [0, 0, 0], axis: [1, 2, 2], majorRadius: 1, minorRadius: 0.3 }));
+  const soup = patchSoup(
+    patchesOf({ kind: 'torus', centre: [0, 0, 0], axis: [1, 2, 2], majorRadius: 1, minorRadius: 0.3 }),
+  );
   const bounds = { min: Float64Array.of(-1.3, -1.3, -1.3), max: Float64Array.of(1.3, 1.3, 1.3) };
   const hits = castRays(rayLattice(0, bounds, [40, 40, 40]), soup, all(soup));
   let wrong = 0;
@@ -74,12 +85,15 @@ describe('winding number', () => {
   });
 
   test('on a finely cut torus the far field errs by less than .05', () => {
-    const soup = patchSoup(patchesOf({ kind: 'torus', centre: [0, 0, 0], axis: [0, 0, 1], majorRadius: 1.2, minorRadius: 0.5 }));
+    const soup = patchSoup(
+      patchesOf({ kind: 'torus', centre: [0, 0, 0], axis: [0, 0, 1], majorRadius: 1.2, minorRadius: 0.5 }),
+    );
     const tree = buildWindingTree(soup, all(soup));
     let worst = 0;
     for (const [x, y, z] of places) {
       const toTube = Math.hypot(Math.hypot(x, y) - 1.2, z) - 0.5;
-      if (Math.abs(toTube) > 0.01) worst = Math.max(worst, Math.abs(windingNumber(tree, x, y, z) - (toTube < 0 ? 1 : 0)));
+      if (Math.abs(toTube) > 0.01)
+        worst = Math.max(worst, Math.abs(windingNumber(tree, x, y, z) - (toTube < 0 ? 1 : 0)));
     }
     expect(worst).toBeLessThan(0.05);
   });
@@ -97,7 +111,23 @@ test('subtracting intervals keeps what is outside', () => {
     from: Float64Array.from(rows, (r) => r[1]),
     to: Float64Array.from(rows, (r) => r[2]),
   });
-  const left = subtractIntervals(list([[0, 0, 10], [0, 12, 14], [2, 0, 4]]), list([[0, 1, 2], [0, 3, 13], [1, 0, 9], [2, -1, 5]]));
+  const left = subtractIntervals(
+    list([
+      [0, 0, 10],
+      [0, 12, 14],
+      [2, 0, 4],
+    ]),
+    list([
+      [0, 1, 2],
+      [0, 3, 13],
+      [1, 0, 9],
+      [2, -1, 5],
+    ]),
+  );
   const rows = Array.from({ length: left.count }, (_, n) => [left.ray[n], left.from[n], left.to[n]]);
-  expect(rows).toEqual([[0, 0, 1], [0, 2, 3], [0, 13, 14]]);
+  expect(rows).toEqual([
+    [0, 0, 1],
+    [0, 2, 3],
+    [0, 13, 14],
+  ]);
 });

@@ -108,7 +108,8 @@ export function deformationGradients({ points, parts }: Prepared, coefficients: 
         for (let d = 0; d < 3; d++) {
           let sum = 0;
           active.forEach((part, m) => {
-            for (let a = 0; a < basis; a++) sum += points.gradients[row + m * basis + a]! * coefficients[(3 * part + d) * basis + a]!;
+            for (let a = 0; a < basis; a++)
+              sum += points.gradients[row + m * basis + a]! * coefficients[(3 * part + d) * basis + a]!;
           });
           out[9 * k + 3 * d + e] = sum;
         }
@@ -118,7 +119,11 @@ export function deformationGradients({ points, parts }: Prepared, coefficients: 
   return out;
 }
 
-export const vectorAt = (list: ArrayLike<number>, k: number): Vec3 => [list[3 * k]!, list[3 * k + 1]!, list[3 * k + 2]!];
+export const vectorAt = (list: ArrayLike<number>, k: number): Vec3 => [
+  list[3 * k]!,
+  list[3 * k + 1]!,
+  list[3 * k + 2]!,
+];
 
 /** Largest difference of two lists of one length. */
 export function furthest(a: ArrayLike<number>, b: ArrayLike<number>): number {
@@ -131,6 +136,10 @@ export function furthest(a: ArrayLike<number>, b: ArrayLike<number>): number {
 /** A structure of typed arrays as text in which every bit counts; quicker to compare than the arrays. */
 export function fingerprint(value: unknown): string {
   return JSON.stringify(value, (_key, item: unknown) =>
-    ArrayBuffer.isView(item) ? createHash('sha256').update(new Uint8Array(item.buffer, item.byteOffset, item.byteLength)).digest('hex') : item,
+    ArrayBuffer.isView(item)
+      ? createHash('sha256')
+          .update(new Uint8Array(item.buffer, item.byteOffset, item.byteLength))
+          .digest('hex')
+      : item,
   );
 }

@@ -13,7 +13,9 @@ const VOLUME = 0.005;
 describe('volume and second moments', () => {
   test('sphere: 4/3 π r³ and V r²/5', () => {
     const r = 0.7;
-    const { volume, secondMoments, centroid } = reportOf(patchesOf({ kind: 'sphere', centre: [1, -2, 0.5], radius: r }));
+    const { volume, secondMoments, centroid } = reportOf(
+      patchesOf({ kind: 'sphere', centre: [1, -2, 0.5], radius: r }),
+    );
     const exact = (4 / 3) * Math.PI * r ** 3;
     expect(off(volume, exact)).toBeLessThan(0.0014);
     for (let d = 0; d < 3; d++) expect(off(secondMoments[d]!, (exact * r * r) / 5)).toBeLessThan(0.004);
@@ -23,19 +25,28 @@ describe('volume and second moments', () => {
   test('rotated box: a b c and V a²/12 along its own axes', () => {
     const [a, b, c] = [1, 0.5, 0.3];
     const axis: [number, number, number] = [2 / 3, 1 / 3, 2 / 3];
-    const { volume, secondMoments } = reportOf(rotated(patchesOf(box([-a / 2, -b / 2, -c / 2], [a / 2, b / 2, c / 2])), axis, 0.7));
+    const { volume, secondMoments } = reportOf(
+      rotated(patchesOf(box([-a / 2, -b / 2, -c / 2], [a / 2, b / 2, c / 2])), axis, 0.7),
+    );
     expect(off(volume, a * b * c)).toBeLessThan(0.0045);
     // The trace does not depend on the rotation, nor does the sum of squares.
     const exact = [a, b, c].map((s) => (a * b * c * s * s) / 12);
     const [xx, yy, zz, xy, yz, zx] = secondMoments;
     expect(off(xx + yy + zz, exact[0]! + exact[1]! + exact[2]!)).toBeLessThan(0.01);
     const squares = xx * xx + yy * yy + zz * zz + 2 * (xy * xy + yz * yz + zx * zx);
-    expect(off(squares, exact.reduce((sum, e) => sum + e * e, 0))).toBeLessThan(0.02);
+    expect(
+      off(
+        squares,
+        exact.reduce((sum, e) => sum + e * e, 0),
+      ),
+    ).toBeLessThan(0.02);
   });
 
   test('torus: 2 π² R r² (Pappus), about its axis V (R² + ¾ r²), along it V r²/4', () => {
     const [R, r] = [1, 0.3];
-    const { volume, secondMoments } = reportOf(patchesOf({ kind: 'torus', centre: [0, 0, 0], axis: [0, 0, 1], majorRadius: R, minorRadius: r }));
+    const { volume, secondMoments } = reportOf(
+      patchesOf({ kind: 'torus', centre: [0, 0, 0], axis: [0, 0, 1], majorRadius: R, minorRadius: r }),
+    );
     const exact = 2 * Math.PI ** 2 * R * r * r;
     expect(off(volume, exact)).toBeLessThan(0.0045);
     expect(off(secondMoments[0] + secondMoments[1], exact * (R * R + 0.75 * r * r))).toBeLessThan(0.01);
@@ -54,7 +65,10 @@ describe('volume and second moments', () => {
   });
 
   test('two overlapping boxes are one body of the union’s volume', () => {
-    const prepared = prepare(plainScene(12), patchesOf(box([0, 0, 0], [1, 0.4, 0.4]), box([0.7, 0.1, 0.1], [1.6, 0.3, 0.5])));
+    const prepared = prepare(
+      plainScene(12),
+      patchesOf(box([0, 0, 0], [1, 0.4, 0.4]), box([0.7, 0.1, 0.1], [1.6, 0.3, 0.5])),
+    );
     expect(prepared.bodies).toHaveLength(1);
     const union = 0.16 + 0.9 * 0.2 * 0.4 - 0.3 * 0.2 * 0.3;
     expect(off(prepared.report.volume, union)).toBeLessThan(VOLUME);
@@ -92,10 +106,14 @@ describe('orientation', () => {
   });
 
   test('∮ x · n dA over the samples is three times the volume', () => {
-    const { samples } = prepare(plainScene(6), patchesOf({ kind: 'torus', centre: [0, 0, 0], axis: [1, 1, 3], majorRadius: 1, minorRadius: 0.2 }).map(flipPatch));
+    const { samples } = prepare(
+      plainScene(6),
+      patchesOf({ kind: 'torus', centre: [0, 0, 0], axis: [1, 1, 3], majorRadius: 1, minorRadius: 0.2 }).map(flipPatch),
+    );
     let flux = 0;
     for (let s = 0; s < samples.count; s++) {
-      for (let d = 0; d < 3; d++) flux += samples.positions[3 * s + d]! * samples.normals[3 * s + d]! * samples.areas[s]!;
+      for (let d = 0; d < 3; d++)
+        flux += samples.positions[3 * s + d]! * samples.normals[3 * s + d]! * samples.areas[s]!;
     }
     expect(off(flux / 3, 2 * Math.PI ** 2 * 0.04)).toBeLessThan(0.002);
   });

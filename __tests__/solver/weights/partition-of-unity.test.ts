@@ -62,7 +62,14 @@ test('every covered place sees two parts within 0.8 R', () => {
 });
 
 test('a lone part reaches all places', () => {
-  const lone: Parts = { ...parts, count: 1, centres: Float64Array.of(0.5, 0.5, 0.5), scales: Float64Array.of(1), radii: new Float64Array(1), body: new Int32Array(1) };
+  const lone: Parts = {
+    ...parts,
+    count: 1,
+    centres: Float64Array.of(0.5, 0.5, 0.5),
+    scales: Float64Array.of(1),
+    radii: new Float64Array(1),
+    body: new Int32Array(1),
+  };
   const body = { firstPart: 0, partCount: 1 };
   startRadii(lone, body);
   coverPlaces(lone, 0, body, places, null);

@@ -71,18 +71,12 @@ export function castRays(lattice: RayLattice, soup: TriangleSoup, list: Int32Arr
     const swap2 = a0 > a1 || (a0 === a1 && b0 > b1);
     for (let a = loA; a <= hiA; a++) {
       for (let b = loB; b <= hiB; b++) {
-        const e0 = swap0
-          ? (a1 - a2) * (b - b2) - (b1 - b2) * (a - a2)
-          : (a2 - a1) * (b - b1) - (b2 - b1) * (a - a1);
-        if ((e0 >= 0) !== (swap0 === turned)) continue;
-        const e1 = swap1
-          ? (a2 - a0) * (b - b0) - (b2 - b0) * (a - a0)
-          : (a0 - a2) * (b - b2) - (b0 - b2) * (a - a2);
-        if ((e1 >= 0) !== (swap1 === turned)) continue;
-        const e2 = swap2
-          ? (a0 - a1) * (b - b1) - (b0 - b1) * (a - a1)
-          : (a1 - a0) * (b - b0) - (b1 - b0) * (a - a0);
-        if ((e2 >= 0) !== (swap2 === turned)) continue;
+        const e0 = swap0 ? (a1 - a2) * (b - b2) - (b1 - b2) * (a - a2) : (a2 - a1) * (b - b1) - (b2 - b1) * (a - a1);
+        if (e0 >= 0 !== (swap0 === turned)) continue;
+        const e1 = swap1 ? (a2 - a0) * (b - b0) - (b2 - b0) * (a - a0) : (a0 - a2) * (b - b2) - (b0 - b2) * (a - a2);
+        if (e1 >= 0 !== (swap1 === turned)) continue;
+        const e2 = swap2 ? (a0 - a1) * (b - b1) - (b0 - b1) * (a - a1) : (a1 - a0) * (b - b0) - (b1 - b0) * (a - a0);
+        if (e2 >= 0 !== (swap2 === turned)) continue;
         if (count === capacity) {
           capacity *= 2;
           site = grown(site, capacity);

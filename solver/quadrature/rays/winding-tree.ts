@@ -92,7 +92,8 @@ export function windingNumber(tree: WindingTree, x: number, y: number, z: number
       const i1 = 1 / Math.sqrt(r2);
       const i3 = i1 / r2;
       const i5 = (3 * i3) / r2;
-      dipoles += i3 * (far[o + 4]! * rx + far[o + 5]! * ry + far[o + 6]! * rz + far[o + 7]! + far[o + 11]! + far[o + 15]!);
+      dipoles +=
+        i3 * (far[o + 4]! * rx + far[o + 5]! * ry + far[o + 6]! * rz + far[o + 7]! + far[o + 11]! + far[o + 15]!);
       dipoles -=
         i5 *
         (rx * (far[o + 7]! * rx + far[o + 8]! * ry + far[o + 9]! * rz) +
@@ -137,7 +138,14 @@ function solidAngleHalf(c: Float64Array, o: number, x: number, y: number, z: num
 }
 
 /** Fills one node's far-field terms from its triangles ([triangle][7] area, area normal, centroid). */
-function expand(far: Float64Array, o: number, corners: Float64Array, facts: Float64Array, from: number, to: number): void {
+function expand(
+  far: Float64Array,
+  o: number,
+  corners: Float64Array,
+  facts: Float64Array,
+  from: number,
+  to: number,
+): void {
   let total = 0;
   let cx = 0;
   let cy = 0;
