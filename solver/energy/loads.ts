@@ -26,7 +26,8 @@ export class Loads {
       .filter((load) => load.kind !== 'gravity')
       .map((load) => {
         const region = 'region' in load ? load.region : ({ kind: 'all' } as const);
-        const chosen = samplesInRegion(samples, region, report.diagonal);
+        // Skin buried in another piece is no outside: pressure and wind do not reach it.
+        const chosen = samplesInRegion(samples, region, report.diagonal).filter((s) => samples.exposed[s] === 1);
         if (chosen.length === 0)
           throw new RangeError(`Load ${load.id} (${load.name}) touches no surface. Move its region onto the body.`);
         return { load, samples: chosen, area: chosen.reduce((sum, s) => sum + samples.areas[s]!, 0) };
