@@ -1,0 +1,3 @@
+import { SignInScreen } from '../../components/people/sign-in-screen';
+
+export default SignInScreen;

@@ -1,0 +1,3 @@
+import { MaterialsScreen } from '../../components/materials/materials-screen';
+
+export default MaterialsScreen;

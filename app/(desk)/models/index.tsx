@@ -1,0 +1,3 @@
+import { ModelsScreen } from '../../../components/models/models-screen';
+
+export default ModelsScreen;

@@ -1,0 +1,3 @@
+import { RunsScreen } from '../../../components/runs/runs-screen';
+
+export default RunsScreen;

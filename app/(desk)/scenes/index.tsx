@@ -1,0 +1,3 @@
+import { ScenesScreen } from '../../../components/scenes/scenes-screen';
+
+export default ScenesScreen;

@@ -1,0 +1,3 @@
+import { TodayScreen } from '../../components/today/today-screen';
+
+export default TodayScreen;

@@ -1,0 +1,3 @@
+import { NotFoundScreen } from '../components/shell/not-found-screen';
+
+export default NotFoundScreen;

@@ -1,0 +1,86 @@
+import { useState } from 'react';
+import { Pressable, StyleSheet, View, type StyleProp, type ViewStyle } from 'react-native';
+import { RADIUS, space, TARGET } from '../theme/tokens';
+import { useTheme } from '../theme/use-theme';
+import { focusRing } from './focus-ring';
+import { Text } from './text';
+
+interface Props {
+  label: string;
+  /** what it costs, in Mono beside the word */
+  cost?: string;
+  kind?: 'primary' | 'plain' | 'quiet' | 'attention';
+  /** shown instead of the label while it works */
+  working?: string | false;
+  /** why it cannot be pressed; said beside it */
+  disabledReason?: string | null;
+  /** for screen readers, when the label alone is not enough */
+  hint?: string;
+  pressed?: boolean;
+  onPress: () => void;
+  style?: StyleProp<ViewStyle>;
+}
+
+/** A word that does something. One primary on a screen. */
+export function Button({ label, cost, kind = 'plain', working = false, disabledReason, hint, pressed, onPress, style }: Props) {
+  const { colors } = useTheme();
+  const [focused, setFocused] = useState(false);
+  const disabled = Boolean(disabledReason) || Boolean(working);
+  const quiet = kind === 'quiet';
+  const ground = disabledReason ? 'transparent' : kind === 'primary' ? colors.kelp : quiet ? 'transparent' : colors.paper;
+  const border = kind === 'attention' ? colors.apricot : kind === 'primary' && !disabledReason ? colors.kelp : colors.edge;
+  const ink = disabledReason ? 'ink2' : kind === 'primary' ? 'onKelp' : kind === 'attention' ? 'apricot' : quiet ? 'kelp' : 'ink';
+  return (
+    <View style={style}>
+      <Pressable
+        role="button"
+        aria-label={working ? working : cost ? `${label}, ${cost}` : label}
+        aria-disabled={disabled}
+        aria-pressed={pressed}
+        accessibilityHint={hint}
+        disabled={disabled}
+        onPress={onPress}
+        onFocus={() => setFocused(true)}
+        onBlur={() => setFocused(false)}
+        style={[
+          styles.button,
+          !quiet && styles.framed,
+          { backgroundColor: ground, borderColor: border },
+          Boolean(disabledReason) && styles.dashed,
+          focused && focusRing(colors.ink),
+        ]}
+      >
+        <Text variant="button" color={ink} numberOfLines={1} style={quiet && styles.underlined}>
+          {working ? working : label}
+        </Text>
+        {cost && !working ? (
+          <Text variant="small" color={ink}>
+            {cost}
+          </Text>
+        ) : null}
+      </Pressable>
+      {disabledReason ? (
+        <Text variant="note" color="ink2" style={styles.reason}>
+          {disabledReason}
+        </Text>
+      ) : null}
+    </View>
+  );
+}
+
+const styles = StyleSheet.create({
+  button: {
+    minHeight: TARGET,
+    minWidth: TARGET,
+    paddingHorizontal: space.l,
+    flexDirection: 'row',
+    alignItems: 'center',
+    justifyContent: 'center',
+    gap: space.s,
+    borderRadius: RADIUS,
+  },
+  framed: { borderWidth: 1 },
+  dashed: { borderStyle: 'dashed' },
+  underlined: { textDecorationLine: 'underline' },
+  reason: { marginTop: space.xs },
+});

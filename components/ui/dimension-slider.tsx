@@ -1,0 +1,169 @@
+import { useEffect, useRef, useState } from 'react';
+import { StyleSheet, TextInput, View, type GestureResponderEvent } from 'react-native';
+import Svg, { Line, Path } from 'react-native-svg';
+import { RADIUS, space, type as variants } from '../theme/tokens';
+import { useTheme } from '../theme/use-theme';
+import { focusRing } from './focus-ring';
+import { Text } from './text';
+
+interface Props {
+  label: string;
+  hint?: string;
+  value: number;
+  min: number;
+  max: number;
+  /** smallest change; arrows step by it, Shift by ten of it */
+  step: number;
+  scale?: 'linear' | 'log';
+  unit?: string;
+  /** figures shown */
+  format: (value: number) => string;
+  /** dotted tick: the preset's or last saved value */
+  reference?: number;
+  /** why a typed value is refused; the last good value stays in force */
+  refuse?: (value: number) => string | null;
+  onChange: (value: number) => void;
+}
+
+const HEIGHT = 36;
+
+/** The drafted dimension as a control: drag the tag, tap it to type, arrows step. */
+export function DimensionSlider(props: Props) {
+  const { label, hint, value, min, max, step, scale = 'linear', unit = '', format, reference, refuse, onChange } = props;
+  const { colors } = useTheme();
+  const [width, setWidth] = useState(0);
+  const [typing, setTyping] = useState<string | null>(null);
+  const [refused, setRefused] = useState<string | null>(null);
+  const [focused, setFocused] = useState(false);
+  const line = useRef<View>(null);
+  const share = (v: number) => {
+    const t = scale === 'log' ? Math.log(v / min) / Math.log(max / min) : (v - min) / (max - min);
+    return Math.max(0, Math.min(1, t));
+  };
+  const snap = (v: number) => Math.max(min, Math.min(max, scale === 'log' ? Number(v.toPrecision(3)) : Math.round(v / step) * step));
+  const atShare = (t: number) => snap(scale === 'log' ? min * (max / min) ** t : min + t * (max - min));
+  const drag = (event: GestureResponderEvent) => {
+    const t = Math.max(0, Math.min(1, event.nativeEvent.locationX / Math.max(1, width)));
+    setRefused(null);
+    onChange(atShare(t));
+  };
+  const nudge = (steps: number) => {
+    setRefused(null);
+    onChange(scale === 'log' ? snap(value * 1.05 ** steps) : snap(value + steps * step));
+  };
+  useKeys(line, nudge);
+  const commit = () => {
+    if (typing === null) return;
+    const typed = Number(typing.replace(',', '.'));
+    const why = !Number.isFinite(typed) || typing.trim() === '' ? 'Give a number.' : (refuse?.(typed) ?? outside(typed, min, max, unit, format));
+    setRefused(why);
+    if (!why) onChange(typed);
+    setTyping(null);
+  };
+  const tagWidth = Math.max(64, 9.7 * (format(value).length + unit.length + 1) + 20);
+  const left = Math.max(0, Math.min(width - tagWidth, share(value) * width - tagWidth / 2));
+  const edge = refused ? colors.apricot : colors.kelp;
+  return (
+    <View style={styles.slider}>
+      <View style={styles.head}>
+        <Text variant="dense">{label}</Text>
+        {hint ? (
+          <Text variant="caption" color="ink2">
+            {hint}
+          </Text>
+        ) : null}
+      </View>
+      <View style={styles.body} onLayout={(event) => setWidth(event.nativeEvent.layout.width)}>
+        <View
+          ref={line}
+          role="slider"
+          aria-label={label}
+          aria-valuemin={min}
+          aria-valuemax={max}
+          aria-valuenow={value}
+          aria-valuetext={`${format(value)} ${unit}`.trim()}
+          tabIndex={0}
+          onFocus={() => setFocused(true)}
+          onBlur={() => setFocused(false)}
+          style={[styles.line, focused && focusRing(colors.ink)]}
+          onStartShouldSetResponder={() => true}
+          onMoveShouldSetResponder={() => true}
+          onResponderTerminationRequest={() => false}
+          onResponderGrant={drag}
+          onResponderMove={drag}
+        >
+          {width > 0 ? (
+            <Svg width={width} height={HEIGHT} style={styles.drawing}>
+              <Line x1={0.5} x2={0.5} y1={5} y2={31} stroke={colors.edge} />
+              <Line x1={width - 0.5} x2={width - 0.5} y1={5} y2={31} stroke={colors.edge} />
+              <Line x1={0} x2={width} y1={18} y2={18} stroke={colors.edge} />
+              <Path d={`M1 18l9 -3.5v7zM${width - 1} 18l-9 -3.5v7z`} fill={colors.edge} />
+              {reference !== undefined ? (
+                <Line x1={share(reference) * width} x2={share(reference) * width} y1={9} y2={27} stroke={colors.ink2} strokeDasharray="2 2" strokeWidth={1.5} />
+              ) : null}
+            </Svg>
+          ) : null}
+        </View>
+        {width > 0 ? (
+          <View style={[styles.tag, { left, width: tagWidth, borderColor: edge, backgroundColor: colors.paper }]} pointerEvents="box-none">
+            <TextInput
+              aria-label={`${label}, typed${unit ? `, ${unit}` : ''}`}
+              value={typing ?? `${format(value)} ${unit}`.trim()}
+              onFocus={() => setTyping(format(value))}
+              onChangeText={setTyping}
+              onBlur={commit}
+              onSubmitEditing={commit}
+              inputMode="decimal"
+              style={[variants.readout, styles.tagText, { color: refused ? colors.apricot : colors.ink }]}
+            />
+          </View>
+        ) : null}
+      </View>
+      <View style={styles.head}>
+        <Text variant="small" color="ink2">
+          {format(min)}
+        </Text>
+        <Text variant="small" color="ink2">{`${format(max)} ${unit}`.trim()}</Text>
+      </View>
+      {refused ? (
+        <Text variant="note" color="apricot" role="alert">
+          {refused}
+        </Text>
+      ) : null}
+    </View>
+  );
+}
+
+function outside(v: number, min: number, max: number, unit: string, format: (v: number) => string): string | null {
+  return v < min || v > max ? `Give a value from ${format(min)} to ${format(max)} ${unit}`.trim() + '.' : null;
+}
+
+/** Arrow keys on the line; the event is the browser's own, as react-native-web passes none on for views. */
+function useKeys(line: React.RefObject<View | null>, nudge: (steps: number) => void): void {
+  const latest = useRef(nudge);
+  useEffect(() => {
+    latest.current = nudge;
+  });
+  useEffect(() => {
+    const element = line.current as unknown as HTMLElement | null;
+    if (!element?.addEventListener) return;
+    const onKey = (event: KeyboardEvent) => {
+      const direction = { ArrowRight: 1, ArrowUp: 1, ArrowLeft: -1, ArrowDown: -1 }[event.key];
+      if (!direction) return;
+      event.preventDefault();
+      latest.current(direction * (event.shiftKey ? 10 : 1));
+    };
+    element.addEventListener('keydown', onKey);
+    return () => element.removeEventListener('keydown', onKey);
+  }, [line]);
+}
+
+const styles = StyleSheet.create({
+  slider: { paddingVertical: space.xs },
+  head: { flexDirection: 'row', justifyContent: 'space-between', alignItems: 'baseline', gap: space.s },
+  body: { height: 44, justifyContent: 'center' },
+  line: { height: 44, justifyContent: 'center', cursor: 'pointer', userSelect: 'none' },
+  drawing: { pointerEvents: 'none' },
+  tag: { position: 'absolute', height: 34, borderWidth: 1, borderRadius: RADIUS, justifyContent: 'center' },
+  tagText: { textAlign: 'center', width: '100%', height: 32, outlineWidth: 0 },
+});
