@@ -1,6 +1,6 @@
 import { seededRandom } from '../../../solver/math/random';
 import { castRays } from '../../../solver/quadrature/rays/cast';
-import { subtractIntervals } from '../../../solver/quadrature/rays/intervals';
+import { insideIntervals, subtractIntervals } from '../../../solver/quadrature/rays/intervals';
 import { rayLattice, rayPlace } from '../../../solver/quadrature/rays/lattice';
 import { patchSoup } from '../../../solver/quadrature/rays/patch-soup';
 import type { TriangleSoup } from '../../../solver/quadrature/rays/soup';
@@ -130,4 +130,22 @@ test('subtracting intervals keeps what is outside', () => {
     [0, 2, 3],
     [0, 13, 14],
   ]);
+});
+
+test('rays without hits ask the winding number and find where it passes ½', () => {
+  const lattice = rayLattice(0, unit, [8, 8, 8]);
+  const hits = castRays(
+    lattice,
+    { positions: new Float64Array(0), triangles: new Int32Array(0), patch: new Int32Array(0) },
+    new Int32Array(0),
+  );
+  const rule = { bounds: unit, winding: (x: number) => x * x, trustCrossings: true };
+  const open = insideIntervals(lattice, hits, { ...rule, closed: false });
+  expect(Math.abs(open.count / 64 - 1)).toBeLessThan(0.1);
+  for (let n = 0; n < open.count; n++) {
+    // Five samples a ray, halved eight times.
+    expect(Math.abs(open.from[n]! - Math.SQRT1_2)).toBeLessThan(0.2 / 2 ** 8);
+    expect(open.to[n]).toBe(1);
+  }
+  expect(insideIntervals(lattice, hits, { ...rule, closed: true }).count).toBe(0);
 });
