@@ -15,6 +15,8 @@ interface Exports {
 }
 
 const PAGE = 65536;
+/** Matrices there is room for. Pages that nobody touches cost nothing. */
+const MATRICES = 4;
 let compiled: WebAssembly.Module | null | undefined;
 
 /** The kernels as WebAssembly with SIMD; null where the engine lacks it. */
@@ -71,7 +73,7 @@ class WasmKernels implements BoundKernels {
     // Everything is allocated from one memory of a fixed size: growing it would take the views away from the callers.
     const doubles =
       points.gradients.length + 40 * points.count + widest * (3 + 5 * longest + widest) + 12 * unknowns +
-      2 * blockCount * size * size + 4 * partCount * unknowns + 2 * size * size; // prettier-ignore
+      MATRICES * blockCount * size * size + 4 * partCount * unknowns + 2 * size * size; // prettier-ignore
     const integers =
       3 * points.groupCount + points.activeParts.length + 4 * partCount + blockCount + partCount * partCount + unknowns;
     this.memory = new WebAssembly.Memory({ initial: Math.ceil((8 * doubles + 4 * integers) / PAGE) + 16 });
