@@ -51,7 +51,7 @@ export type Config = Readonly<z.infer<typeof environmentSchema>>;
 /** The environment does not fit; `message` lists every fault on its own line. */
 export class ConfigFault extends Error {}
 
-export function readConfig(environment: NodeJS.ProcessEnv): Config {
+export function readConfig(environment: Record<string, string | undefined>): Config {
   const parsed = environmentSchema.safeParse(environment);
   if (!parsed.success) {
     const faults = parsed.error.issues.map((issue) => `  ${issue.path.join('.')} ${issue.message}`);

@@ -11,6 +11,7 @@ export { plainKernels } from './kernels/plain';
 export type { Kernels } from './kernels/kernels';
 export { prepare } from './quadrature/prepare';
 export type { BasisRows, Prepared, SetupReport, SurfaceMap } from './quadrature/prepared';
+export { displaySurface } from './quadrature/display-surface';
 export { evaluateRows } from './quadrature/rows';
 export { restCoefficients } from './quadrature/rest';
 export { surfaceFromRecipe, surfaceRecipe } from './quadrature/surface-recipe';

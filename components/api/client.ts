@@ -15,7 +15,11 @@ export class ApiClient {
   onSignedOut: () => void = () => undefined;
 
   async signIn(email: string, password: string): Promise<Session> {
-    const response = await this.raw('/api/session', { method: 'POST', body: JSON.stringify({ email, password }), headers: JSON_TYPE });
+    const response = await this.raw('/api/session', {
+      method: 'POST',
+      body: JSON.stringify({ email, password }),
+      headers: JSON_TYPE,
+    });
     if (!response.ok) throw await problemOf(response);
     return this.accept(sessionSchema.parse(await response.json()));
   }
@@ -38,11 +42,15 @@ export class ApiClient {
   }
 
   async post<T extends z.ZodType>(path: string, body: unknown, schema: T): Promise<z.infer<T>> {
-    return schema.parse(await (await this.send(path, { method: 'POST', body: JSON.stringify(body), headers: JSON_TYPE })).json());
+    return schema.parse(
+      await (await this.send(path, { method: 'POST', body: JSON.stringify(body), headers: JSON_TYPE })).json(),
+    );
   }
 
   async patch<T extends z.ZodType>(path: string, body: unknown, schema: T): Promise<z.infer<T>> {
-    return schema.parse(await (await this.send(path, { method: 'PATCH', body: JSON.stringify(body), headers: JSON_TYPE })).json());
+    return schema.parse(
+      await (await this.send(path, { method: 'PATCH', body: JSON.stringify(body), headers: JSON_TYPE })).json(),
+    );
   }
 
   async remove(path: string): Promise<void> {
@@ -61,7 +69,13 @@ export class ApiClient {
   }
 
   /** Uploads one file with progress (0…1). A lost connection is told as a sentence; nothing is half-saved. */
-  async upload<T extends z.ZodType>(path: string, file: File, schema: T, onProgress: (share: number) => void, signal?: AbortSignal): Promise<z.infer<T>> {
+  async upload<T extends z.ZodType>(
+    path: string,
+    file: File,
+    schema: T,
+    onProgress: (share: number) => void,
+    signal?: AbortSignal,
+  ): Promise<z.infer<T>> {
     const once = () =>
       new Promise<{ status: number; body: unknown }>((resolve, reject) => {
         const request = new XMLHttpRequest();
@@ -79,7 +93,8 @@ export class ApiClient {
           }
           resolve({ status: request.status, body });
         };
-        request.onerror = () => reject(lostConnection(`“${file.name}” was not kept. Choose it again when the connection returns.`));
+        request.onerror = () =>
+          reject(lostConnection(`“${file.name}” was not kept. Choose it again when the connection returns.`));
         request.onabort = () => reject(new DOMException('Stopped', 'AbortError'));
         signal?.addEventListener('abort', () => request.abort());
         request.send(form);

@@ -20,7 +20,12 @@ export class ApiProblem extends Error {
 export const NO_CONNECTION = '/problems/no-connection';
 
 export const lostConnection = (what = 'Nothing was lost; try again when it returns.') =>
-  new ApiProblem({ type: NO_CONNECTION, title: 'No connection', status: 0, detail: `No connection to the studio's server. ${what}` });
+  new ApiProblem({
+    type: NO_CONNECTION,
+    title: 'No connection',
+    status: 0,
+    detail: `No connection to the studio's server. ${what}`,
+  });
 
 /** The problem in a response that is not ok. */
 export async function problemOf(response: Response): Promise<ApiProblem> {
@@ -31,12 +36,21 @@ export async function problemOf(response: Response): Promise<ApiProblem> {
 export function problemFrom(status: number, body: unknown): ApiProblem {
   const parsed = problemSchema.safeParse(body);
   if (parsed.success) return new ApiProblem(parsed.data);
-  return new ApiProblem({ type: 'about:blank', title: 'The server gave no answer', status, detail: 'The server gave no answer that can be read. Try again.' });
+  return new ApiProblem({
+    type: 'about:blank',
+    title: 'The server gave no answer',
+    status,
+    detail: 'The server gave no answer that can be read. Try again.',
+  });
 }
 
 /** Faults by form field (the last part of each pointer), and what belongs to none. */
-export function fieldFaults(error: unknown, fields: readonly string[]): { byField: Record<string, string>; rest: string | null } {
-  if (!(error instanceof ApiProblem)) return { byField: {}, rest: error ? String(error instanceof Error ? error.message : error) : null };
+export function fieldFaults(
+  error: unknown,
+  fields: readonly string[],
+): { byField: Record<string, string>; rest: string | null } {
+  if (!(error instanceof ApiProblem))
+    return { byField: {}, rest: error ? String(error instanceof Error ? error.message : error) : null };
   const byField: Record<string, string> = {};
   for (const { pointer, detail } of error.problem.errors ?? []) {
     const field = pointer.split('/').pop() ?? '';

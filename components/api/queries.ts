@@ -18,7 +18,11 @@ export const queries = {
       queryFn: () => api.get(`/api/productions/${productionId}/models?limit=100`, modelListSchema),
     }),
   model: (id: string) =>
-    queryOptions({ queryKey: ['model', id], staleTime: SOON, queryFn: () => api.get(`/api/models/${id}`, modelSchema) }),
+    queryOptions({
+      queryKey: ['model', id],
+      staleTime: SOON,
+      queryFn: () => api.get(`/api/models/${id}`, modelSchema),
+    }),
   patches: (modelId: string) =>
     queryOptions({
       queryKey: ['patches', modelId],
@@ -30,7 +34,9 @@ export const queries = {
           knotsU: Float64Array.from(patch.knotsU),
           knotsV: Float64Array.from(patch.knotsV),
           points: Float64Array.from(patch.points),
-          weights: patch.weights ? Float64Array.from(patch.weights) : new Float64Array(patch.countU * patch.countV).fill(1),
+          weights: patch.weights
+            ? Float64Array.from(patch.weights)
+            : new Float64Array(patch.countU * patch.countV).fill(1),
         }));
       },
     }),
@@ -41,7 +47,11 @@ export const queries = {
       queryFn: () => api.get(`/api/productions/${productionId}/scenes?limit=100`, sceneListSchema),
     }),
   scene: (id: string) =>
-    queryOptions({ queryKey: ['scene', id], staleTime: SOON, queryFn: () => api.get(`/api/scenes/${id}`, sceneSchema) }),
+    queryOptions({
+      queryKey: ['scene', id],
+      staleTime: SOON,
+      queryFn: () => api.get(`/api/scenes/${id}`, sceneSchema),
+    }),
   revisions: (sceneId: string) =>
     queryOptions({
       queryKey: ['revisions', sceneId],
@@ -49,7 +59,11 @@ export const queries = {
       queryFn: () => api.get(`/api/scenes/${sceneId}/revisions?limit=100`, revisionListSchema),
     }),
   revision: (id: string) =>
-    queryOptions({ queryKey: ['revision', id], staleTime: FOREVER, queryFn: () => api.get(`/api/revisions/${id}`, revisionSchema) }),
+    queryOptions({
+      queryKey: ['revision', id],
+      staleTime: FOREVER,
+      queryFn: () => api.get(`/api/revisions/${id}`, revisionSchema),
+    }),
   materials: (productionId: string) =>
     queryOptions({
       queryKey: ['materials', productionId],
@@ -62,7 +76,12 @@ export const queries = {
       staleTime: SOON,
       queryFn: () => api.get(`/api/productions/${productionId}/runs?limit=100`, runListSchema),
     }),
-  run: (id: string) => queryOptions({ queryKey: ['run', id], staleTime: SOON, queryFn: () => api.get(`/api/runs/${id}`, runSchema) }),
+  run: (id: string) =>
+    queryOptions({ queryKey: ['run', id], staleTime: SOON, queryFn: () => api.get(`/api/runs/${id}`, runSchema) }),
   traces: (runId: string) =>
-    queryOptions({ queryKey: ['traces', runId], staleTime: FOREVER, queryFn: () => api.get(`/api/runs/${runId}/traces`, runTracesSchema) }),
+    queryOptions({
+      queryKey: ['traces', runId],
+      staleTime: FOREVER,
+      queryFn: () => api.get(`/api/runs/${runId}/traces`, runTracesSchema),
+    }),
 };

@@ -50,7 +50,8 @@ export function SignInScreen() {
           See how it moves, the day the model arrives.
         </Text>
         <Text color="ink2" style={styles.lead}>
-          Bring a curved-surface model as it is. Give it rubber, foam or flesh, hold it, push it, and keep the run you agree on.
+          Bring a curved-surface model as it is. Give it rubber, foam or flesh, hold it, push it, and keep the run you
+          agree on.
         </Text>
         <PuddingDrawing width={wide ? 520 : 320} />
       </View>
@@ -59,8 +60,26 @@ export function SignInScreen() {
           Sign in
         </Text>
         <View style={styles.fields}>
-          <Field label="E-mail" value={form.values.email} onChangeText={form.handleChange('email')} onBlur={() => void form.setFieldTouched('email')} onSubmit={submit} error={fault('email')} keyboard="email-address" autoComplete="email" />
-          <Field label="Password" value={form.values.password} onChangeText={form.handleChange('password')} onBlur={() => void form.setFieldTouched('password')} onSubmit={submit} error={fault('password')} secret autoComplete="current-password" />
+          <Field
+            label="E-mail"
+            value={form.values.email}
+            onChangeText={form.handleChange('email')}
+            onBlur={() => void form.setFieldTouched('email')}
+            onSubmit={submit}
+            error={fault('email')}
+            keyboard="email-address"
+            autoComplete="email"
+          />
+          <Field
+            label="Password"
+            value={form.values.password}
+            onChangeText={form.handleChange('password')}
+            onBlur={() => void form.setFieldTouched('password')}
+            onSubmit={submit}
+            error={fault('password')}
+            secret
+            autoComplete="current-password"
+          />
         </View>
         {refused ? (
           <Text variant="note" color="apricot" role="alert">

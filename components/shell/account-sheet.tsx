@@ -16,7 +16,13 @@ export function AccountSheet({ onClose }: { onClose: () => void }) {
       <View style={styles.group}>
         <Text variant="strong">Production</Text>
         {me?.memberships.map(({ production: each }) => (
-          <Button key={each.id} label={each.name} pressed={each.id === production?.id} kind={each.id === production?.id ? 'attention' : 'plain'} onPress={() => choose(each.id)} />
+          <Button
+            key={each.id}
+            label={each.name}
+            pressed={each.id === production?.id}
+            kind={each.id === production?.id ? 'attention' : 'plain'}
+            onPress={() => choose(each.id)}
+          />
         ))}
       </View>
       <View style={styles.group}>

@@ -56,7 +56,12 @@ export function DeskShell({ children }: { children: ReactNode }) {
           ) : (
             <View style={styles.fill} />
           )}
-          <Pressable role="button" aria-label={`${account}: account and look`} onPress={() => setOpen(true)} style={[styles.account, wide && { borderLeftWidth: 1, borderLeftColor: colors.hair }]}>
+          <Pressable
+            role="button"
+            aria-label={`${account}: account and look`}
+            onPress={() => setOpen(true)}
+            style={[styles.account, wide && { borderLeftWidth: 1, borderLeftColor: colors.hair }]}
+          >
             <Text variant="note" color="ink2" numberOfLines={1}>
               {wide ? account : me.name}
             </Text>
@@ -99,7 +104,12 @@ function Places({ path }: { path: string }) {
             aria-label={place.label}
             aria-current={here ? 'page' : undefined}
             onPress={() => router.push(place.href)}
-            style={[styles.place, wide ? { borderBottomColor: here ? colors.kelp : 'transparent', borderBottomWidth: 3 } : { borderTopColor: here ? colors.kelp : 'transparent', borderTopWidth: 3 }]}
+            style={[
+              styles.place,
+              wide
+                ? { borderBottomColor: here ? colors.kelp : 'transparent', borderBottomWidth: 3 }
+                : { borderTopColor: here ? colors.kelp : 'transparent', borderTopWidth: 3 },
+            ]}
           >
             <Text variant={here ? 'button' : 'body'} color={here ? 'ink' : 'ink2'} numberOfLines={1}>
               {place.label}
@@ -121,6 +131,12 @@ const styles = StyleSheet.create({
   account: { minHeight: TARGET, justifyContent: 'center', paddingHorizontal: space.l, maxWidth: 260 },
   places: { flexDirection: 'row', alignSelf: 'stretch' },
   spread: { justifyContent: 'space-between', flex: 1 },
-  place: { minHeight: TARGET, minWidth: TARGET, justifyContent: 'center', alignItems: 'center', paddingHorizontal: space.m },
+  place: {
+    minHeight: TARGET,
+    minWidth: TARGET,
+    justifyContent: 'center',
+    alignItems: 'center',
+    paddingHorizontal: space.m,
+  },
   bottom: { height: 60, borderTopWidth: 1, flexDirection: 'row' },
 });

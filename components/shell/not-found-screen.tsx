@@ -8,7 +8,10 @@ export function NotFoundScreen() {
   const { colors } = useTheme();
   return (
     <View style={{ flex: 1, padding: 24, backgroundColor: colors.page }}>
-      <Empty title="There is nothing here." action={<Button label="Go to Today" onPress={() => router.replace('/today')} />}>
+      <Empty
+        title="There is nothing here."
+        action={<Button label="Go to Today" onPress={() => router.replace('/today')} />}
+      >
         The address may be mistyped, or what it named is gone.
       </Empty>
     </View>

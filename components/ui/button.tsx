@@ -22,14 +22,39 @@ interface Props {
 }
 
 /** A word that does something. One primary on a screen. */
-export function Button({ label, cost, kind = 'plain', working = false, disabledReason, hint, pressed, onPress, style }: Props) {
+export function Button({
+  label,
+  cost,
+  kind = 'plain',
+  working = false,
+  disabledReason,
+  hint,
+  pressed,
+  onPress,
+  style,
+}: Props) {
   const { colors } = useTheme();
   const [focused, setFocused] = useState(false);
   const disabled = Boolean(disabledReason) || Boolean(working);
   const quiet = kind === 'quiet';
-  const ground = disabledReason ? 'transparent' : kind === 'primary' ? colors.kelp : quiet ? 'transparent' : colors.paper;
-  const border = kind === 'attention' ? colors.apricot : kind === 'primary' && !disabledReason ? colors.kelp : colors.edge;
-  const ink = disabledReason ? 'ink2' : kind === 'primary' ? 'onKelp' : kind === 'attention' ? 'apricot' : quiet ? 'kelp' : 'ink';
+  const ground = disabledReason
+    ? 'transparent'
+    : kind === 'primary'
+      ? colors.kelp
+      : quiet
+        ? 'transparent'
+        : colors.paper;
+  const border =
+    kind === 'attention' ? colors.apricot : kind === 'primary' && !disabledReason ? colors.kelp : colors.edge;
+  const ink = disabledReason
+    ? 'ink2'
+    : kind === 'primary'
+      ? 'onKelp'
+      : kind === 'attention'
+        ? 'apricot'
+        : quiet
+          ? 'kelp'
+          : 'ink';
   return (
     <View style={style}>
       <Pressable

@@ -5,7 +5,17 @@ import { useTheme } from '../theme/use-theme';
 import { Text } from './text';
 
 /** A section between hairlines; folds to its head and keeps the summary. */
-export function Card({ title, summary, folds = true, children }: { title: string; summary?: string; folds?: boolean; children: ReactNode }) {
+export function Card({
+  title,
+  summary,
+  folds = true,
+  children,
+}: {
+  title: string;
+  summary?: string;
+  folds?: boolean;
+  children: ReactNode;
+}) {
   const { colors } = useTheme();
   const [open, setOpen] = useState(true);
   const head = (
@@ -23,7 +33,12 @@ export function Card({ title, summary, folds = true, children }: { title: string
   return (
     <View style={[styles.card, { borderBottomColor: colors.hair }]}>
       {folds ? (
-        <Pressable role="button" aria-expanded={open} aria-label={`${title}, ${open ? 'fold' : 'unfold'}`} onPress={() => setOpen(!open)}>
+        <Pressable
+          role="button"
+          aria-expanded={open}
+          aria-label={`${title}, ${open ? 'fold' : 'unfold'}`}
+          onPress={() => setOpen(!open)}
+        >
           {head}
         </Pressable>
       ) : (

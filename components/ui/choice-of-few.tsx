@@ -14,7 +14,11 @@ interface Props<T extends string> {
 export function ChoiceOfFew<T extends string>({ label, options, value, onChange }: Props<T>) {
   const { colors } = useTheme();
   return (
-    <View role="radiogroup" aria-label={label} style={[styles.row, { borderColor: colors.edge, backgroundColor: colors.paper }]}>
+    <View
+      role="radiogroup"
+      aria-label={label}
+      style={[styles.row, { borderColor: colors.edge, backgroundColor: colors.paper }]}
+    >
       {options.map((option, k) => {
         const chosen = option.value === value;
         return (

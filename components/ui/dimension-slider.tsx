@@ -29,7 +29,20 @@ const HEIGHT = 36;
 
 /** The drafted dimension as a control: drag the tag, tap it to type, arrows step. */
 export function DimensionSlider(props: Props) {
-  const { label, hint, value, min, max, step, scale = 'linear', unit = '', format, reference, refuse, onChange } = props;
+  const {
+    label,
+    hint,
+    value,
+    min,
+    max,
+    step,
+    scale = 'linear',
+    unit = '',
+    format,
+    reference,
+    refuse,
+    onChange,
+  } = props;
   const { colors } = useTheme();
   const [width, setWidth] = useState(0);
   const [typing, setTyping] = useState<string | null>(null);
@@ -40,7 +53,8 @@ export function DimensionSlider(props: Props) {
     const t = scale === 'log' ? Math.log(v / min) / Math.log(max / min) : (v - min) / (max - min);
     return Math.max(0, Math.min(1, t));
   };
-  const snap = (v: number) => Math.max(min, Math.min(max, scale === 'log' ? Number(v.toPrecision(3)) : Math.round(v / step) * step));
+  const snap = (v: number) =>
+    Math.max(min, Math.min(max, scale === 'log' ? Number(v.toPrecision(3)) : Math.round(v / step) * step));
   const atShare = (t: number) => snap(scale === 'log' ? min * (max / min) ** t : min + t * (max - min));
   const drag = (event: GestureResponderEvent) => {
     const t = Math.max(0, Math.min(1, event.nativeEvent.locationX / Math.max(1, width)));
@@ -55,7 +69,10 @@ export function DimensionSlider(props: Props) {
   const commit = () => {
     if (typing === null) return;
     const typed = Number(typing.replace(',', '.'));
-    const why = !Number.isFinite(typed) || typing.trim() === '' ? 'Give a number.' : (refuse?.(typed) ?? outside(typed, min, max, unit, format));
+    const why =
+      !Number.isFinite(typed) || typing.trim() === ''
+        ? 'Give a number.'
+        : (refuse?.(typed) ?? outside(typed, min, max, unit, format));
     setRefused(why);
     if (!why) onChange(typed);
     setTyping(null);
@@ -99,13 +116,24 @@ export function DimensionSlider(props: Props) {
               <Line x1={0} x2={width} y1={18} y2={18} stroke={colors.edge} />
               <Path d={`M1 18l9 -3.5v7zM${width - 1} 18l-9 -3.5v7z`} fill={colors.edge} />
               {reference !== undefined ? (
-                <Line x1={share(reference) * width} x2={share(reference) * width} y1={9} y2={27} stroke={colors.ink2} strokeDasharray="2 2" strokeWidth={1.5} />
+                <Line
+                  x1={share(reference) * width}
+                  x2={share(reference) * width}
+                  y1={9}
+                  y2={27}
+                  stroke={colors.ink2}
+                  strokeDasharray="2 2"
+                  strokeWidth={1.5}
+                />
               ) : null}
             </Svg>
           ) : null}
         </View>
         {width > 0 ? (
-          <View style={[styles.tag, { left, width: tagWidth, borderColor: edge, backgroundColor: colors.paper }]} pointerEvents="box-none">
+          <View
+            style={[styles.tag, { left, width: tagWidth, borderColor: edge, backgroundColor: colors.paper }]}
+            pointerEvents="box-none"
+          >
             <TextInput
               aria-label={`${label}, typed${unit ? `, ${unit}` : ''}`}
               value={typing ?? `${format(value)} ${unit}`.trim()}
@@ -123,7 +151,9 @@ export function DimensionSlider(props: Props) {
         <Text variant="small" color="ink2">
           {format(min)}
         </Text>
-        <Text variant="small" color="ink2">{`${format(max)} ${unit}`.trim()}</Text>
+        <Text variant="small" color="ink2">
+          {`${format(max)} ${unit}`.trim()}
+        </Text>
       </View>
       {refused ? (
         <Text variant="note" color="apricot" role="alert">

@@ -23,7 +23,21 @@ interface Props {
 
 /** A labelled field; the unit stands inside it, what is wrong with it below. */
 export function Field(props: Props) {
-  const { label, value, onChangeText, onBlur, onSubmit, unit, error, note, secret, multiline, keyboard, autoComplete, placeholder } = props;
+  const {
+    label,
+    value,
+    onChangeText,
+    onBlur,
+    onSubmit,
+    unit,
+    error,
+    note,
+    secret,
+    multiline,
+    keyboard,
+    autoComplete,
+    placeholder,
+  } = props;
   const { colors } = useTheme();
   const [focused, setFocused] = useState(false);
   const id = useId();
@@ -32,7 +46,13 @@ export function Field(props: Props) {
       <Text variant="strong" nativeID={id}>
         {label}
       </Text>
-      <View style={[styles.box, { backgroundColor: colors.paper, borderColor: error ? colors.apricot : colors.edge }, focused && focusRing(colors.ink)]}>
+      <View
+        style={[
+          styles.box,
+          { backgroundColor: colors.paper, borderColor: error ? colors.apricot : colors.edge },
+          focused && focusRing(colors.ink),
+        ]}
+      >
         <TextInput
           aria-label={unit ? `${label}, ${unit}` : label}
           aria-invalid={Boolean(error)}
@@ -74,7 +94,14 @@ export function Field(props: Props) {
 
 const styles = StyleSheet.create({
   field: { gap: space.xs, flex: 1 },
-  box: { minHeight: 48, borderWidth: 1, borderRadius: RADIUS, flexDirection: 'row', alignItems: 'center', paddingRight: space.m },
+  box: {
+    minHeight: 48,
+    borderWidth: 1,
+    borderRadius: RADIUS,
+    flexDirection: 'row',
+    alignItems: 'center',
+    paddingRight: space.m,
+  },
   input: { flex: 1, minWidth: 0, minHeight: 46, paddingHorizontal: space.m, outlineWidth: 0 },
   tall: { minHeight: 72, paddingTop: space.m },
 });

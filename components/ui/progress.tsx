@@ -7,7 +7,19 @@ import { Button } from './button';
 import { Text } from './text';
 
 /** Long work as a dimension line: what is done left, what remains right, and always a way to stop. */
-export function Progress({ label, share, left, right, stop }: { label: string; share: number; left: string; right: string; stop?: { label: string; onPress: () => void } }) {
+export function Progress({
+  label,
+  share,
+  left,
+  right,
+  stop,
+}: {
+  label: string;
+  share: number;
+  left: string;
+  right: string;
+  stop?: { label: string; onPress: () => void };
+}) {
   const { colors } = useTheme();
   const [width, setWidth] = useState(0);
   const x = Math.max(2, Math.min(1, share) * (width - 2));

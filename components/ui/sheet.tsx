@@ -20,7 +20,15 @@ export function Sheet({ title, onClose, children }: { title: string; onClose: ()
         <Pressable aria-label="Close" role="button" style={StyleSheet.absoluteFill} onPress={onClose}>
           <View style={[StyleSheet.absoluteFill, { backgroundColor: colors.ink, opacity: 0.18 }]} />
         </Pressable>
-        <View role="dialog" aria-label={title} style={[styles.sheet, wide ? styles.column : styles.bottom, { backgroundColor: colors.page, borderColor: colors.ink }]}>
+        <View
+          role="dialog"
+          aria-label={title}
+          style={[
+            styles.sheet,
+            wide ? styles.column : styles.bottom,
+            { backgroundColor: colors.page, borderColor: colors.ink },
+          ]}
+        >
           <View style={styles.head}>
             <Text variant="section" level={2}>
               {title}

@@ -16,7 +16,15 @@ export function Wordmark({ width = 74 }: { width?: number }) {
   return (
     <Svg width={width} height={(width * 64) / 168} viewBox="0 0 168 64" role="img" aria-label="Lollop">
       {STROKES.map((d) => (
-        <Path key={d} d={d} stroke={colors.ink} strokeWidth={5} strokeLinecap="round" strokeLinejoin="round" fill="none" />
+        <Path
+          key={d}
+          d={d}
+          stroke={colors.ink}
+          strokeWidth={5}
+          strokeLinecap="round"
+          strokeLinejoin="round"
+          fill="none"
+        />
       ))}
     </Svg>
   );
