@@ -10,7 +10,13 @@ import type { BakeChunk } from '../solver-client/solver-client';
 const AGAIN_SECONDS = 3;
 
 /** Starts a run of a saved revision and sends how its coefficients become the surface. */
-export async function startRun(api: ApiClient, sceneId: string, revisionId: string, document: SceneDocument, ready: Ready): Promise<Run> {
+export async function startRun(
+  api: ApiClient,
+  sceneId: string,
+  revisionId: string,
+  document: SceneDocument,
+  ready: Ready,
+): Promise<Run> {
   if (document.time.kind !== 'motion') throw new Error('Only motion can be baked. Choose motion under Time.');
   const run = await api.post(
     `/api/scenes/${sceneId}/runs`,
@@ -24,7 +30,11 @@ export async function startRun(api: ApiClient, sceneId: string, revisionId: stri
         partCount: ready.partCount,
         basis: ready.basis,
         diagonal: ready.report.diagonal,
-        materials: document.materials.map((m) => ({ name: m.name, presetId: m.preset?.id ?? null, presetVersion: m.preset?.version ?? null })),
+        materials: document.materials.map((m) => ({
+          name: m.name,
+          presetId: m.preset?.id ?? null,
+          presetVersion: m.preset?.version ?? null,
+        })),
       },
     },
     runSchema,
@@ -57,10 +67,14 @@ export class BakeUpload {
     const traces = this.traces.slice();
     this.queue = this.queue.then(async () => {
       if (this.failed || this.stopped) return;
-      await this.keepTrying(() => this.api.putBytes(`/api/runs/${this.run.id}/chunks/${chunk.index}`, deflateSync(chunk.bytes)));
+      await this.keepTrying(() =>
+        this.api.putBytes(`/api/runs/${this.run.id}/chunks/${chunk.index}`, deflateSync(chunk.bytes)),
+      );
       if (chunk.pose <= this.run.frames && !this.failed) {
         const state = new TextEncoder().encode(JSON.stringify({ traces, state: Array.from(chunk.state) }));
-        await this.keepTrying(() => this.api.putBytes(`/api/runs/${this.run.id}/checkpoint?frame=${chunk.pose}`, deflateSync(state)));
+        await this.keepTrying(() =>
+          this.api.putBytes(`/api/runs/${this.run.id}/checkpoint?frame=${chunk.pose}`, deflateSync(state)),
+        );
       }
     });
   }
@@ -107,7 +121,11 @@ export class BakeUpload {
 function tracesOf(poses: readonly PoseTrace[]): RunTraces {
   const gauges = poses[0]?.gauges ?? [];
   return {
-    gauges: gauges.map(({ id, name }, k) => ({ id, name, displacement: poses.map((pose) => pose.gauges[k]!.displacement) })),
+    gauges: gauges.map(({ id, name }, k) => ({
+      id,
+      name,
+      displacement: poses.map((pose) => pose.gauges[k]!.displacement),
+    })),
     energy: poses.map((pose) => pose.energy),
     volumeChange: poses.map((pose) => pose.volumeChange),
     worstCompression: poses.map((pose) => pose.worstCompression),

@@ -10,7 +10,10 @@ export interface Draft {
 
 export function readDraft(sceneId: string): Draft | null {
   try {
-    const raw = JSON.parse(localStorage.getItem(keyOf(sceneId)) ?? 'null') as { basedOn?: unknown; document?: unknown } | null;
+    const raw = JSON.parse(localStorage.getItem(keyOf(sceneId)) ?? 'null') as {
+      basedOn?: unknown;
+      document?: unknown;
+    } | null;
     const parsed = sceneDocumentSchema.safeParse(raw?.document);
     return parsed.success && typeof raw?.basedOn === 'number' ? { basedOn: raw.basedOn, document: parsed.data } : null;
   } catch {

@@ -31,11 +31,21 @@ export function MaterialCard({ document, edit, mass }: { document: SceneDocument
   const high = Math.max(1e6, E * 10);
   const kilo = (v: number) => figures(v / 1000);
   return (
-    <Card title="Material" summary={document.materials.length === 1 ? 'one for the whole body' : `${document.materials.length} in this body`}>
+    <Card
+      title="Material"
+      summary={document.materials.length === 1 ? 'one for the whole body' : `${document.materials.length} in this body`}
+    >
       {document.materials.length > 1 ? (
         <View style={{ flexDirection: 'row', flexWrap: 'wrap', gap: 8 }}>
           {document.materials.map((m, k) => (
-            <Button key={m.id} label={m.id} hint={m.name} pressed={k === at} kind={k === at ? 'attention' : 'plain'} onPress={() => setIndex(k)} />
+            <Button
+              key={m.id}
+              label={m.id}
+              hint={m.name}
+              pressed={k === at}
+              kind={k === at ? 'attention' : 'plain'}
+              onPress={() => setIndex(k)}
+            />
           ))}
         </View>
       ) : null}
@@ -64,7 +74,13 @@ export function MaterialCard({ document, edit, mass }: { document: SceneDocument
         max={0.49}
         step={0.01}
         format={(v) => v.toFixed(2)}
-        refuse={(v) => (v < 0 ? 'Poisson’s ratio cannot be negative here.' : v >= 0.5 ? 'At 0.5 nothing can change volume. Use 0.49 or less.' : null)}
+        refuse={(v) =>
+          v < 0
+            ? 'Poisson’s ratio cannot be negative here.'
+            : v >= 0.5
+              ? 'At 0.5 nothing can change volume. Use 0.49 or less.'
+              : null
+        }
         onChange={(v) => set('poisson', { poissonsRatio: Number(v.toFixed(4)) })}
       />
       <DimensionSlider

@@ -10,7 +10,19 @@ import { Text } from '../ui/text';
 import type { Edit } from './edit';
 
 /** How many parts the body moves on, and what that costs. */
-export function PartsCard({ document, edit, ready, rate, unit }: { document: SceneDocument; edit: Edit; ready: Ready | null; rate: number | null; unit: LengthUnit }) {
+export function PartsCard({
+  document,
+  edit,
+  ready,
+  rate,
+  unit,
+}: {
+  document: SceneDocument;
+  edit: Edit;
+  ready: Ready | null;
+  rate: number | null;
+  unit: LengthUnit;
+}) {
   const now = ready?.partCount ?? document.parts.count;
   // Work per step grows about with the square of the part count (active sets stay, the factor fills).
   const forecast = rate === null || now === document.parts.count ? null : rate * (now / document.parts.count) ** 2;
@@ -29,7 +41,9 @@ export function PartsCard({ document, edit, ready, rate, unit }: { document: Sce
         onChange={(count) => edit('part-count', (d) => ({ ...d, parts: { ...d.parts, count: Math.round(count) } }))}
       />
       <Row title="Speed now" value={rate === null ? 'paused' : `${figures(rate)} steps/s`} />
-      {forecast !== null ? <Row title={`Forecast at ${document.parts.count} parts`} value={`about ${figures(forecast, 2)} steps/s`} /> : null}
+      {forecast !== null ? (
+        <Row title={`Forecast at ${document.parts.count} parts`} value={`about ${figures(forecast, 2)} steps/s`} />
+      ) : null}
       <ChoiceOfFew
         label="Detail of a part"
         value={document.parts.order}
@@ -52,7 +66,11 @@ export function PartsCard({ document, edit, ready, rate, unit }: { document: Sce
       />
       {ready ? (
         <View style={{ gap: 4 }}>
-          <Row title="Pieces" value={String(ready.bodies.length)} note={ready.bodies.map((b) => `${b.partCount} part${b.partCount === 1 ? '' : 's'}`).join(', ')} />
+          <Row
+            title="Pieces"
+            value={String(ready.bodies.length)}
+            note={ready.bodies.map((b) => `${b.partCount} part${b.partCount === 1 ? '' : 's'}`).join(', ')}
+          />
           <Row title="Diagonal" value={lengthText(diagonal, unit)} />
           {ready.report.remarks.map((remark) => (
             <Text key={remark} variant="note" color="ink2">

@@ -14,11 +14,21 @@ export function TimeCard({ document, edit }: { document: SceneDocument; edit: Ed
   const set = (kind: string, change: Partial<Extract<SceneDocument['time'], { kind: 'motion' }>>) =>
     edit(`time-${kind}`, (d) => (d.time.kind === 'motion' ? { ...d, time: { ...d.time, ...change } } : d));
   return (
-    <Card title="Time" summary={time.kind === 'motion' ? `${figures(time.frames / time.framesPerSecond)} s of motion` : 'rest under load'}>
+    <Card
+      title="Time"
+      summary={
+        time.kind === 'motion' ? `${figures(time.frames / time.framesPerSecond)} s of motion` : 'rest under load'
+      }
+    >
       <ChoiceOfFew
         label="What is solved"
         value={time.kind}
-        onChange={(kind) => edit('time-kind', (d) => ({ ...d, time: kind === 'motion' ? { ...MOTION } : { kind: 'static', loadSteps: 4 } }))}
+        onChange={(kind) =>
+          edit('time-kind', (d) => ({
+            ...d,
+            time: kind === 'motion' ? { ...MOTION } : { kind: 'static', loadSteps: 4 },
+          }))
+        }
         options={[
           { value: 'motion', label: 'Motion' },
           { value: 'static', label: 'Rest under load' },
@@ -36,9 +46,36 @@ export function TimeCard({ document, edit }: { document: SceneDocument; edit: Ed
         />
       ) : (
         <>
-          <DimensionSlider label="Frames per second" value={time.framesPerSecond} min={12} max={120} step={1} format={(v) => figures(v, 4)} refuse={(v) => (v >= 1 && v <= 240 ? null : 'Frames per second go from 1 to 240.')} onChange={(v) => set('fps', { framesPerSecond: v })} />
-          <DimensionSlider label="Frames to bake" value={time.frames} min={1} max={480} step={1} format={(v) => String(Math.round(v))} refuse={(v) => (Number.isInteger(v) && v >= 1 ? null : 'Bake at least one frame.')} onChange={(v) => set('frames', { frames: Math.round(v) })} />
-          <DimensionSlider label="Substeps a frame" value={time.substeps} min={1} max={16} step={1} format={(v) => String(Math.round(v))} refuse={(v) => (Number.isInteger(v) && v >= 1 ? null : 'At least one substep.')} onChange={(v) => set('substeps', { substeps: Math.round(v) })} />
+          <DimensionSlider
+            label="Frames per second"
+            value={time.framesPerSecond}
+            min={12}
+            max={120}
+            step={1}
+            format={(v) => figures(v, 4)}
+            refuse={(v) => (v >= 1 && v <= 240 ? null : 'Frames per second go from 1 to 240.')}
+            onChange={(v) => set('fps', { framesPerSecond: v })}
+          />
+          <DimensionSlider
+            label="Frames to bake"
+            value={time.frames}
+            min={1}
+            max={480}
+            step={1}
+            format={(v) => String(Math.round(v))}
+            refuse={(v) => (Number.isInteger(v) && v >= 1 ? null : 'Bake at least one frame.')}
+            onChange={(v) => set('frames', { frames: Math.round(v) })}
+          />
+          <DimensionSlider
+            label="Substeps a frame"
+            value={time.substeps}
+            min={1}
+            max={16}
+            step={1}
+            format={(v) => String(Math.round(v))}
+            refuse={(v) => (Number.isInteger(v) && v >= 1 ? null : 'At least one substep.')}
+            onChange={(v) => set('substeps', { substeps: Math.round(v) })}
+          />
           <ChoiceOfFew
             label="Method"
             value={time.method}

@@ -19,7 +19,11 @@ export interface BakeState {
 }
 
 /** Baking from the workbench: start, go on, stop; chunks are sent as they come. */
-export function useBake(sceneId: string, client: React.RefObject<SolverClient | null>, events: React.RefObject<SolverEvents>) {
+export function useBake(
+  sceneId: string,
+  client: React.RefObject<SolverClient | null>,
+  events: React.RefObject<SolverEvents>,
+) {
   const queries = useQueryClient();
   const [bake, setBake] = useState<BakeState | null>(null);
   const [fault, setFault] = useState<string | null>(null);

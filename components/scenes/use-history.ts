@@ -12,7 +12,13 @@ const SAME_EDIT_MILLISECONDS = 800;
 
 /** The edited document with undo and redo. */
 export function useHistory(start: SceneDocument) {
-  const [history, setHistory] = useState<History & { kind: string; at: number }>({ past: [], now: start, future: [], kind: '', at: 0 });
+  const [history, setHistory] = useState<History & { kind: string; at: number }>({
+    past: [],
+    now: start,
+    future: [],
+    kind: '',
+    at: 0,
+  });
   const edit = useCallback((kind: string, change: (document: SceneDocument) => SceneDocument) => {
     setHistory((h) => {
       const at = Date.now();
@@ -38,5 +44,12 @@ export function useHistory(start: SceneDocument) {
       }),
     [],
   );
-  return { document: history.now, edit, undo, redo, canUndo: history.past.length > 0, canRedo: history.future.length > 0 };
+  return {
+    document: history.now,
+    edit,
+    undo,
+    redo,
+    canUndo: history.past.length > 0,
+    canRedo: history.future.length > 0,
+  };
 }

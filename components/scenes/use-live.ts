@@ -19,7 +19,12 @@ export interface LiveTraces {
 const EMPTY: LiveTraces = { energy: [], volume: [], compression: [], gauge: [] };
 
 /** The solver at work on a document: what it says, and what it can be told. */
-export function useLive(document: SceneDocument, patches: Patch[], up: 'y' | 'z', bakeEvents: React.RefObject<SolverEvents>) {
+export function useLive(
+  document: SceneDocument,
+  patches: Patch[],
+  up: 'y' | 'z',
+  bakeEvents: React.RefObject<SolverEvents>,
+) {
   const [pose] = useState(() => new PoseSource());
   const client = useRef<SolverClient | null>(null);
   const [ready, setReady] = useState<Ready | null>(null);
@@ -79,7 +84,10 @@ export function useLive(document: SceneDocument, patches: Patch[], up: 'y' | 'z'
     client.current = solver;
     const first = latest.current.document;
     sent.current = first;
-    solver.open(first, patches.map((patch) => scalePatch(patch, first.unit)));
+    solver.open(
+      first,
+      patches.map((patch) => scalePatch(patch, first.unit)),
+    );
     return () => solver.close();
   }, [patches, pose, bakeEvents]);
 

@@ -37,7 +37,10 @@ export class SolverClient {
     worker.onmessage = ({ data }: MessageEvent<Response>) => this.take(data);
     worker.onerror = (event) => {
       event.preventDefault();
-      this.events.onError?.('The solver broke off and was started again. The scene is kept and stands at rest.', 'live');
+      this.events.onError?.(
+        'The solver broke off and was started again. The scene is kept and stands at rest.',
+        'live',
+      );
       this.restart();
     };
     return worker;
