@@ -30,7 +30,7 @@ export function useBake(
   const upload = useRef<BakeUpload | null>(null);
   const change = (part: Partial<BakeState>) => setBake((now) => now && { ...now, ...part });
 
-  const follow = (run: Run, sender: BakeUpload) => {
+  const follow = (sender: BakeUpload) => {
     upload.current = sender;
     const fail = (message: string) => {
       sender.stop();
@@ -74,7 +74,7 @@ export function useBake(
       try {
         const run = await startRun(api, sceneId, revisionId, document, ready);
         setBake({ run, pose: 0, poses: run.frames + 1, secondsLeft: 0, waiting: false, sending: false });
-        follow(run, sender(run));
+        follow(sender(run));
         client.current?.bake(null);
       } catch (error) {
         setFault((error as Error).message);
@@ -87,7 +87,7 @@ export function useBake(
         const sending = sender(run);
         const from = await sending.resume(inflateSync);
         setBake({ run, pose: from?.pose ?? 0, poses: run.frames + 1, secondsLeft: 0, waiting: false, sending: false });
-        follow(run, sending);
+        follow(sending);
         client.current?.bake(from);
       } catch (error) {
         setFault((error as Error).message);

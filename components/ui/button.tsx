@@ -12,7 +12,7 @@ interface Props {
   kind?: 'primary' | 'plain' | 'quiet' | 'attention';
   /** shown instead of the label while it works */
   working?: string | false;
-  /** why it cannot be pressed; said beside it */
+  /** why it cannot be pressed, said beside it; '' when the reason is plain to see */
   disabledReason?: string | null;
   /** for screen readers, when the label alone is not enough */
   hint?: string;
@@ -35,26 +35,12 @@ export function Button({
 }: Props) {
   const { colors } = useTheme();
   const [focused, setFocused] = useState(false);
-  const disabled = Boolean(disabledReason) || Boolean(working);
+  const off = disabledReason !== undefined && disabledReason !== null;
+  const disabled = off || Boolean(working);
   const quiet = kind === 'quiet';
-  const ground = disabledReason
-    ? 'transparent'
-    : kind === 'primary'
-      ? colors.kelp
-      : quiet
-        ? 'transparent'
-        : colors.paper;
-  const border =
-    kind === 'attention' ? colors.apricot : kind === 'primary' && !disabledReason ? colors.kelp : colors.edge;
-  const ink = disabledReason
-    ? 'ink2'
-    : kind === 'primary'
-      ? 'onKelp'
-      : kind === 'attention'
-        ? 'apricot'
-        : quiet
-          ? 'kelp'
-          : 'ink';
+  const ground = off ? 'transparent' : kind === 'primary' ? colors.kelp : quiet ? 'transparent' : colors.paper;
+  const border = kind === 'attention' ? colors.apricot : kind === 'primary' && !off ? colors.kelp : colors.edge;
+  const ink = off ? 'ink2' : kind === 'primary' ? 'onKelp' : kind === 'attention' ? 'apricot' : quiet ? 'kelp' : 'ink';
   return (
     <View style={style}>
       <Pressable
@@ -71,7 +57,7 @@ export function Button({
           styles.button,
           !quiet && styles.framed,
           { backgroundColor: ground, borderColor: border },
-          Boolean(disabledReason) && styles.dashed,
+          off && styles.dashed,
           focused && focusRing(colors.ink),
         ]}
       >

@@ -1,0 +1,147 @@
+import { router } from 'expo-router';
+import { useEffect } from 'react';
+import { StyleSheet, View } from 'react-native';
+import { lengthUnitFor, timeCode } from '../../shared/units';
+import { StageView } from '../stage/stage-view';
+import { useBreakpoint } from '../theme/use-breakpoint';
+import { useTheme } from '../theme/use-theme';
+import { Button } from '../ui/button';
+import { Card } from '../ui/card';
+import { PhoneHead } from '../ui/phone-head';
+import { Row } from '../ui/row';
+import { Caution, Fault, Loading } from '../ui/states';
+import { Text } from '../ui/text';
+import { TitleBlock } from '../ui/title-block';
+import { CloseUp, FrameRule } from './frame-rule';
+import { gaugeDistance, gaugeTitle } from './gauge-series';
+import { PlayControls } from './play-controls';
+import { useClock } from './use-clock';
+import { useRun, type OpenRun } from './use-run';
+
+/** A run to scrub: made for a thumb, good on a desk. */
+export function RunPlayerScreen({ runId }: { runId: string }) {
+  const open = useRun(runId);
+  if (open.fault && !open.run) return <Fault title="This run could not be opened.">{open.fault}</Fault>;
+  if (!open.run) return <Loading>Fetching the run …</Loading>;
+  return <Player open={open} />;
+}
+
+function Player({ open }: { open: OpenRun }) {
+  const run = open.run!;
+  const { wide } = useBreakpoint();
+  const { scheme, colors } = useTheme();
+  const clock = useClock(run.frames, run.framesPerSecond);
+  const { poses, source, arrived, surface, traces, document } = open;
+  useEffect(() => {
+    source.set(poses?.at(clock.frame) ?? null);
+  }, [source, poses, clock.frame, arrived]);
+  const unit = lengthUnitFor(run.provenance.diagonal);
+  const all = run.frames + 1;
+  const title = `Run ${run.number}, ${run.scene.name}`;
+  const stage = (
+    <StageView
+      label={`${title}, frame ${clock.frame}`}
+      surface={surface}
+      pose={source}
+      scheme={scheme}
+      up={document?.up ?? 'z'}
+      groundHeight={document?.obstacles[0]?.height ?? null}
+      unit={unit}
+      marks={(document?.gauges ?? []).map((g) => ({ id: g.id, kind: 'gauge' as const, at: g.point }))}
+    >
+      <View style={styles.corner} pointerEvents="none">
+        <Text variant="readout">{timeCode(clock.frame, run.framesPerSecond)}</Text>
+        <Text variant="note" color={open.fault ? 'apricot' : 'ink2'}>
+          {open.fault ??
+            (!surface
+              ? 'Setting up the body …'
+              : arrived < all
+                ? `${arrived} of ${all} frames have arrived`
+                : run.status === 'complete'
+                  ? ''
+                  : 'This run is unfinished.')}
+        </Text>
+      </View>
+      <TitleBlock
+        cells={[
+          { label: 'Model', value: run.model.name, wide: true },
+          { label: 'Scene', value: run.scene.name },
+          { label: 'Revision', value: String(run.revision.number), mono: true },
+          { label: 'Run', value: String(run.number), mono: true },
+          { label: 'Frame', value: `${clock.frame} of ${run.frames}`, mono: true },
+        ]}
+        phone={[
+          { label: 'Revision', value: String(run.revision.number), mono: true },
+          { label: 'Frame', value: `${clock.frame} of ${run.frames}`, mono: true },
+        ]}
+      />
+    </StageView>
+  );
+  const rule = (
+    <FrameRule
+      frames={run.frames}
+      frame={clock.frame}
+      arrived={arrived}
+      series={[{ name: 'moved', values: gaugeDistance(traces) }]}
+      title={gaugeTitle(traces)}
+      unit="mm"
+      onFrame={clock.scrub}
+    />
+  );
+  const beside = <Button label="Set beside another run" onPress={() => router.push('/runs')} />;
+  if (!wide) {
+    return (
+      <View style={styles.fill}>
+        <PhoneHead title={title} back="/runs" />
+        <View style={styles.fill}>{stage}</View>
+        <View style={[styles.thumb, { borderTopColor: colors.hair }]}>
+          {rule}
+          <CloseUp frames={run.frames} frame={clock.frame} onFrame={clock.scrub} />
+          <View style={styles.pad}>
+            <PlayControls clock={clock} spread />
+          </View>
+        </View>
+      </View>
+    );
+  }
+  return (
+    <View style={styles.split}>
+      <View style={styles.fill}>
+        <View style={styles.fill}>{stage}</View>
+        <View style={[styles.thumb, { borderTopColor: colors.hair }]}>
+          {rule}
+          <View style={styles.pad}>
+            <PlayControls clock={clock} />
+          </View>
+        </View>
+      </View>
+      <View style={[styles.column, { borderLeftColor: colors.hair }]}>
+        <Card title={title} summary={`revision ${run.revision.number}`} folds={false}>
+          <Row title="Made by" value={run.createdBy.name} />
+          <Row title="Part count" value={String(run.provenance.partCount)} />
+          <Row title="Material" note={run.provenance.materials.map((m) => m.name).join(', ')} />
+          <Row title="Frames" value={`${run.frames} at ${run.framesPerSecond} /s`} />
+          <Row title="Solver" value={`${run.provenance.solverVersion}, ${run.provenance.kernels}`} />
+          {traces ? (
+            <Row title="Gauge, furthest" value={`${Math.max(0, ...gaugeDistance(traces)).toFixed(1)} mm`} />
+          ) : null}
+          {traces ? <Row title="Worst compression" value={Math.min(1, ...traces.worstCompression).toFixed(2)} /> : null}
+          {beside}
+          <Caution />
+          <Text variant="note" color="ink2">
+            Space plays, arrows step, Shift and arrows step ten, Home and End go to the ends.
+          </Text>
+        </Card>
+      </View>
+    </View>
+  );
+}
+
+const styles = StyleSheet.create({
+  fill: { flex: 1, minHeight: 0, minWidth: 0 },
+  split: { flex: 1, flexDirection: 'row' },
+  column: { width: 340, borderLeftWidth: 1 },
+  corner: { position: 'absolute', left: 12, top: 10 },
+  thumb: { borderTopWidth: 1, paddingVertical: 8, gap: 4 },
+  pad: { paddingHorizontal: 16 },
+});
