@@ -66,7 +66,10 @@ export const supportSchema = z.strictObject({
   id,
   name,
   region: regionSchema,
-  axes: z.array(z.enum(['x', 'y', 'z'])).min(1, 'Hold at least one direction.').default(['x', 'y', 'z']),
+  axes: z
+    .array(z.enum(['x', 'y', 'z']))
+    .min(1, 'Hold at least one direction.')
+    .default(['x', 'y', 'z']),
   keys: z
     .array(supportKey)
     .refine((keys) => keys.every((key, i) => i === 0 || key.time > keys[i - 1]!.time), 'Key times must rise.')
@@ -127,7 +130,11 @@ export const sceneDocumentSchema = z
     up: z.enum(['y', 'z']).default('z'),
     parts: z
       .strictObject({
-        count: z.int().min(1, 'A body needs at least one part.').max(MAX_PARTS, `At most ${MAX_PARTS} parts.`).default(24),
+        count: z
+          .int()
+          .min(1, 'A body needs at least one part.')
+          .max(MAX_PARTS, `At most ${MAX_PARTS} parts.`)
+          .default(24),
         order: z.enum(['quadratic', 'linear']).default('quadratic'),
       })
       .default({ count: 24, order: 'quadratic' }),
@@ -144,7 +151,11 @@ export const sceneDocumentSchema = z
       const seen = new Set<string>();
       scene[key].forEach((item, index) => {
         if (seen.has(item.id)) {
-          context.addIssue({ code: 'custom', path: [key, index, 'id'], message: `Two ${key} share the id ${item.id}.` });
+          context.addIssue({
+            code: 'custom',
+            path: [key, index, 'id'],
+            message: `Two ${key} share the id ${item.id}.`,
+          });
         }
         seen.add(item.id);
       });

@@ -21,7 +21,7 @@ interface Started {
 function start(environment: Record<string, string>): Started {
   const child = spawn(process.execPath, ['-r', '@swc-node/register', 'server/main.ts'], {
     cwd: ROOT,
-    env: { PATH: process.env.PATH, ...environment } as NodeJS.ProcessEnv,
+    env: { PATH: process.env.PATH, ...environment } as unknown as NodeJS.ProcessEnv,
   });
   let text = '';
   child.stdout.on('data', (chunk: Buffer) => (text += chunk.toString()));

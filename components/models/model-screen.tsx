@@ -9,7 +9,7 @@ import { displaySurface, scalePatch, type Patch } from '../../solver/index';
 import { api } from '../api/client';
 import { queries } from '../api/queries';
 import { useMay, useSession } from '../api/session';
-import { defaultDocument } from '../scenes/default-document';
+import { defaultDocument } from '../../shared/default-document';
 import { PoseSource } from '../stage/pose-source';
 import { StageView } from '../stage/stage-view';
 import { space } from '../theme/tokens';

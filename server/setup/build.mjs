@@ -27,9 +27,14 @@ export function buildWeb() {
   const stamp = path.join(root, 'dist/.sources');
   if (existsSync(stamp) && readFileSync(stamp, 'utf8') === digest) return;
   say('Building the web application (the first time takes about a minute) …');
-  runShown('npx', ['expo', 'export', '-p', 'web', '--output-dir', 'dist'], 'The web application could not be built; the lines above say why.', {
-    env: { ...process.env, CI: '1', EXPO_OFFLINE: '1', EXPO_NO_TELEMETRY: '1', NODE_ENV: 'production' },
-  });
+  runShown(
+    'npx',
+    ['expo', 'export', '-p', 'web', '--output-dir', 'dist'],
+    'The web application could not be built; the lines above say why.',
+    {
+      env: { ...process.env, CI: '1', EXPO_OFFLINE: '1', EXPO_NO_TELEMETRY: '1', NODE_ENV: 'production' },
+    },
+  );
   mkdirSync(path.dirname(stamp), { recursive: true });
   writeFileSync(stamp, digest);
 }

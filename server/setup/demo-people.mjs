@@ -2,9 +2,27 @@
 export const DEMO_PEOPLE = [
   { name: 'Ines Carrow', email: 'ines@gannet.example', password: 'harbour-light', administrator: true, role: null },
   { name: 'Marta Quill', email: 'marta@gannet.example', password: 'tide-table', administrator: false, role: 'lead' },
-  { name: 'Joss Harrow', email: 'joss@gannet.example', password: 'bell-buoy', administrator: false, role: 'technical-director' },
-  { name: 'Tam Okafor', email: 'tam@gannet.example', password: 'rope-locker', administrator: false, role: 'technical-director' },
-  { name: 'Wren Castellan', email: 'wren@gannet.example', password: 'paper-gull', administrator: false, role: 'artist' },
+  {
+    name: 'Joss Harrow',
+    email: 'joss@gannet.example',
+    password: 'bell-buoy',
+    administrator: false,
+    role: 'technical-director',
+  },
+  {
+    name: 'Tam Okafor',
+    email: 'tam@gannet.example',
+    password: 'rope-locker',
+    administrator: false,
+    role: 'technical-director',
+  },
+  {
+    name: 'Wren Castellan',
+    email: 'wren@gannet.example',
+    password: 'paper-gull',
+    administrator: false,
+    role: 'artist',
+  },
   { name: 'Pia Lund', email: 'pia@gannet.example', password: 'salt-wind', administrator: false, role: 'artist' },
 ];
 

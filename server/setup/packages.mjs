@@ -18,5 +18,9 @@ export function ensurePackages() {
   const lock = path.join(root, 'package-lock.json');
   if (existsSync(installed) && statSync(installed).mtimeMs >= statSync(lock).mtimeMs) return;
   say('Installing the npm packages …');
-  runShown('npm', ['ci', '--no-audit', '--no-fund'], 'The npm packages could not be installed. Check the connection to the registry and start again.');
+  runShown(
+    'npm',
+    ['ci', '--no-audit', '--no-fund'],
+    'The npm packages could not be installed. Check the connection to the registry and start again.',
+  );
 }

@@ -41,7 +41,9 @@ function owner() {
     const id = (flag) => Number(execFileSync('id', [flag, 'postgres'], { encoding: 'utf8' }));
     return { uid: id('-u'), gid: id('-g') };
   } catch {
-    throw new SetupFault('PostgreSQL does not run as root and there is no user “postgres”. Add one, or start as a normal user.');
+    throw new SetupFault(
+      'PostgreSQL does not run as root and there is no user “postgres”. Add one, or start as a normal user.',
+    );
   }
 }
 
@@ -111,7 +113,9 @@ export async function startPostgres(dataFolder) {
     mkdirSync(home, { recursive: true });
     if (user) chownSync(home, user.uid, user.gid);
   } catch (error) {
-    throw new SetupFault(`The folder ${home} cannot be used (${error.code}). Free it, or name another place in LOLLOP_DATA_DIR.`);
+    throw new SetupFault(
+      `The folder ${home} cannot be used (${error.code}). Free it, or name another place in LOLLOP_DATA_DIR.`,
+    );
   }
   checkReach(home, user);
   if (!existsSync(path.join(cluster, 'PG_VERSION'))) {
@@ -119,9 +123,22 @@ export async function startPostgres(dataFolder) {
     rmSync(cluster, { recursive: true, force: true });
     writeFileSync(passwordFile, randomBytes(24).toString('hex'), { mode: 0o600 });
     if (user) chownSync(passwordFile, user.uid, user.gid);
-    const args = ['-D', cluster, '-U', 'lollop', '-E', 'UTF8', '--locale=C', '-A', 'scram-sha-256', `--pwfile=${passwordFile}`];
+    const args = [
+      '-D',
+      cluster,
+      '-U',
+      'lollop',
+      '-E',
+      'UTF8',
+      '--locale=C',
+      '-A',
+      'scram-sha-256',
+      `--pwfile=${passwordFile}`,
+    ];
     if (!runAs(user, path.join(bin, 'initdb'), args)) {
-      throw new SetupFault(`The database cluster could not be made in ${cluster}. Is there space, and may this user write there?`);
+      throw new SetupFault(
+        `The database cluster could not be made in ${cluster}. Is there space, and may this user write there?`,
+      );
     }
   }
   const password = readFileSync(passwordFile, 'utf8');

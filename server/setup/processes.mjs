@@ -7,7 +7,11 @@ export const root = path.resolve(import.meta.dirname, '../..');
 
 /** Runs a program to its end and shows what it prints; throws a SetupFault with `fault` when it fails. */
 export function runShown(command, args, fault, options = {}) {
-  const { status, error } = spawnSync(command, args, { cwd: root, stdio: ['ignore', 'inherit', 'inherit'], ...options });
+  const { status, error } = spawnSync(command, args, {
+    cwd: root,
+    stdio: ['ignore', 'inherit', 'inherit'],
+    ...options,
+  });
   if (error || status !== 0) throw new SetupFault(fault);
 }
 

@@ -15,7 +15,9 @@ function checkPort() {
     const probe = net.createServer();
     probe.once('error', (error) => {
       const why = error.code === 'EACCES' ? 'may not be used by this user' : 'is taken';
-      reject(new SetupFault(`Port ${port} ${why}. Stop the other program, or choose another: PORT=${port + 1} npm start`));
+      reject(
+        new SetupFault(`Port ${port} ${why}. Stop the other program, or choose another: PORT=${port + 1} npm start`),
+      );
     });
     probe.listen(port, host, () => probe.close(resolve));
   });
@@ -23,7 +25,8 @@ function checkPort() {
 
 await runSetup(async () => {
   checkNode();
-  if (!(port >= 1 && port <= 65535)) throw new SetupFault(`PORT must be a number from 1 to 65535, not “${process.env.PORT}”.`);
+  if (!(port >= 1 && port <= 65535))
+    throw new SetupFault(`PORT must be a number from 1 to 65535, not “${process.env.PORT}”.`);
   await checkPort();
   ensurePackages();
   const data = dataFolder();
@@ -62,7 +65,10 @@ await runSetup(async () => {
     child = startShown(process.execPath, ['dist-server/main.js'], env);
     child.once('exit', (code) => stop(code ?? 1));
     await untilReady(`http://${host}:${port}/api/health/ready`, () => stopping);
-    if (!stopping) say(`\nLollop is at http://${host === '0.0.0.0' ? '127.0.0.1' : host}:${port}\n\n${demoLines()}\n\nCtrl-C stops everything.`);
+    if (!stopping)
+      say(
+        `\nLollop is at http://${host === '0.0.0.0' ? '127.0.0.1' : host}:${port}\n\n${demoLines()}\n\nCtrl-C stops everything.`,
+      );
   } catch (error) {
     postgres.stop();
     throw error;
@@ -71,7 +77,10 @@ await runSetup(async () => {
 
 async function untilReady(address, givenUp) {
   for (let tries = 0; tries < 300 && !givenUp(); tries++) {
-    const ok = await fetch(address).then((answer) => answer.ok, () => false);
+    const ok = await fetch(address).then(
+      (answer) => answer.ok,
+      () => false,
+    );
     if (ok) return;
     await new Promise((resolve) => setTimeout(resolve, 100));
   }

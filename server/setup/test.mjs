@@ -10,16 +10,31 @@ import { runSetup, say } from './say.mjs';
 
 /** Runs one jest project; resolves to its counts. */
 function runJest(project, env, report) {
-  const args = ['jest', '--selectProjects', project, '--json', `--outputFile=${report}`, '--testLocationInResults=false'];
+  const args = [
+    'jest',
+    '--selectProjects',
+    project,
+    '--json',
+    `--outputFile=${report}`,
+    '--testLocationInResults=false',
+  ];
   const workers = project === 'e2e' ? ['--runInBand'] : ['--maxWorkers=2'];
   return new Promise((resolve) => {
-    const child = spawn('npx', [...args, ...workers], { cwd: root, stdio: ['ignore', 'ignore', 'inherit'], env: { ...process.env, ...env } });
+    const child = spawn('npx', [...args, ...workers], {
+      cwd: root,
+      stdio: ['ignore', 'ignore', 'inherit'],
+      env: { ...process.env, ...env },
+    });
     child.once('exit', (code) => {
       try {
         const result = JSON.parse(readFileSync(report, 'utf8'));
         // A file that does not even load has no failed test of its own; count it as one.
         const failed = result.numFailedTests + result.numRuntimeErrorTestSuites;
-        resolve({ passed: result.numPassedTests, failed: failed || (code === 0 ? 0 : 1), skipped: result.numPendingTests });
+        resolve({
+          passed: result.numPassedTests,
+          failed: failed || (code === 0 ? 0 : 1),
+          skipped: result.numPendingTests,
+        });
       } catch {
         resolve({ passed: 0, failed: 1, skipped: 0 });
       }

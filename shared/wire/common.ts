@@ -5,7 +5,8 @@ export const instantSchema = z.iso.datetime();
 export const sha256Schema = z.string().regex(/^[0-9a-f]{64}$/);
 
 /** Lists are pages: `nextCursor` is null on the last one. */
-export const pageOf = <T extends z.ZodType>(item: T) => z.object({ items: z.array(item), nextCursor: z.string().nullable() });
+export const pageOf = <T extends z.ZodType>(item: T) =>
+  z.object({ items: z.array(item), nextCursor: z.string().nullable() });
 
 export const pageQuerySchema = z.object({
   limit: z.coerce.number().int().min(1).max(100).default(50),

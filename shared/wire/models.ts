@@ -39,7 +39,10 @@ export const modelSchema = z.object({
   unitConfirmed: z.boolean(),
   patchCount: z.int(),
   /** Corners in the file's unit. */
-  bounds: z.object({ min: z.tuple([z.number(), z.number(), z.number()]), max: z.tuple([z.number(), z.number(), z.number()]) }),
+  bounds: z.object({
+    min: z.tuple([z.number(), z.number(), z.number()]),
+    max: z.tuple([z.number(), z.number(), z.number()]),
+  }),
   report: importReportSchema,
   createdAt: instantSchema,
   createdBy: personRefSchema,

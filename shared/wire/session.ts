@@ -14,9 +14,7 @@ export const meSchema = z.object({
   name: z.string(),
   email: z.string(),
   administrator: z.boolean(),
-  memberships: z.array(
-    z.object({ production: z.object({ id: idSchema, name: z.string() }), role: z.enum(ROLES) }),
-  ),
+  memberships: z.array(z.object({ production: z.object({ id: idSchema, name: z.string() }), role: z.enum(ROLES) })),
 });
 export type Me = z.infer<typeof meSchema>;
 

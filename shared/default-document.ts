@@ -1,8 +1,8 @@
-import { GRAVITY } from '../../shared/words';
-import type { MaterialPreset } from '../../shared/wire/materials';
-import type { Model } from '../../shared/wire/models';
-import type { SceneDocument } from '../../shared/scene-document';
-import type { Vec3 } from '../../solver/index';
+import { GRAVITY } from './words';
+import type { MaterialPreset } from './wire/materials';
+import type { Model } from './wire/models';
+import type { SceneDocument } from './scene-document';
+import type { Vec3 } from '../solver/scene';
 
 /** The preset a first scene starts with when the production has it. */
 const FIRST_CHOICE = /gelatin 9\.1/i;
