@@ -11,6 +11,8 @@ import type { BlockPairs, BodyMatrices } from './prepared';
  * A neighbour's polynomials are a shift of the part's own, p_j = T_ij p_i, so a pair needs only
  * ∫ w_i w_j m dV for the monomials m of twice the degree (35 numbers instead of 100 products):
  * the block is their matrix times T_ijᵀ.
+ *
+ * `stabilisationShare` scales the stabilisation form (1 for solids, see sheetStabilisation).
  */
 export function bodyMatrices(
   fine: FinePoints,
@@ -18,6 +20,7 @@ export function bodyMatrices(
   firstPart: number,
   partCount: number,
   field: BasisField,
+  stabilisationShare: number,
 ): BodyMatrices {
   const { basis, parts } = field;
   const width = MONOMIALS[basis];
@@ -93,5 +96,6 @@ export function bodyMatrices(
     momentBlock(block, 0, basis, own, (part - firstPart) * width, shift);
     for (let q = 0; q < size; q++) stabilisation.values[p * size + q]! += block[q]!;
   }
+  for (let n = 0; n < stabilisation.values.length; n++) stabilisation.values[n]! *= stabilisationShare;
   return { mass, stabilisation };
 }

@@ -22,7 +22,7 @@ import { scatterOnTriangles } from './rays/scatter';
 import { flipTriangles, type TriangleSoup } from './rays/soup';
 import { massReport, pieceRemarks } from './report';
 import { samplePlaces, surfaceSamples } from './samples';
-import { SHEET_THICKNESS } from './sheets';
+import { SHEET_THICKNESS, sheetStabilisation } from './sheets';
 import { findSolids, type Solid } from './solids';
 import { StageClock } from './stage-clock';
 import { displayMesh, surfaceMap, VERTEX_BUDGET } from './surface-map';
@@ -88,7 +88,11 @@ export function prepare(
   const dilatation = dilatationGroups(points, dominant, parts, bodies);
   clock.mark('quadrature', 0.75);
 
-  const matrices = bodies.map((body, b) => bodyMatrices(solids[b]!.fine, b, body.firstPart, body.partCount, field));
+  const matrices = bodies.map((body, b) => {
+    const { fine, sheet } = solids[b]!;
+    const share = sheet ? sheetStabilisation(thickness, meanScale(parts, body)) : 1;
+    return bodyMatrices(fine, b, body.firstPart, body.partCount, field, share);
+  });
   clock.mark('matrices', 0.85);
 
   const samples = surfaceSamples(places, bodyOfPatch, exposedSamples(places, pieces, extent.diagonal), field);
@@ -143,4 +147,9 @@ function bodiesOf(solids: readonly Solid[], parts: Parts): Body[] {
     volume: totalVolume(fine),
     patches: piece.patches,
   }));
+}
+
+function meanScale(parts: Parts, { firstPart, partCount }: Body): number {
+  const own = parts.scales.subarray(firstPart, firstPart + partCount);
+  return own.reduce((sum, h) => sum + h, 0) / partCount;
 }

@@ -89,7 +89,7 @@ export interface BlockPairs {
 }
 
 /** Constant scalar matrices of one body, integrated on the fine points: ∫ N N dV (m³) and the
- *  stabilisation form ∫ Σ_i w_i |p_i c_i − x|² dV (m³). Density and modulus multiply them later.
+ *  stabilisation form ∫ Σ_i w_i |p_i c_i − x|² dV (m³; of sheets a small share). Density and modulus multiply them later.
  *  ∫ ∇N·∇N dV is left to the mechanics: it must use the same points as the elastic energy. */
 export interface BodyMatrices {
   mass: BlockPairs;

@@ -63,3 +63,13 @@ export function sheetPoints(patches: readonly Patch[], piece: Piece, thickness: 
   }
   return { count: 2 * n, positions, volumes };
 }
+
+/**
+ * Share of the stabilisation form that a sheet of thickness t keeps when its parts' polynomials are
+ * scaled by h: 0.1 (t/h)², at most 1. Bending resists with t², so the form of a solid (in proportion
+ * to 1/h²) holds a sheet stiff: a strip with t/L = .01 deflected .27 to .65 of beam theory with the
+ * whole form, .81 to .97 with a tenth, 1.00 to 1.02 with a hundredth.
+ */
+export function sheetStabilisation(thickness: number, scale: number): number {
+  return Math.min(1, 0.1 * (thickness / scale) ** 2);
+}
