@@ -53,7 +53,6 @@ export function RunsScreen() {
                             label={picked.includes(run.id) ? 'Chosen' : 'Choose'}
                             hint={`Choose run ${run.number} to compare`}
                             pressed={picked.includes(run.id)}
-                            kind={picked.includes(run.id) ? 'attention' : 'plain'}
                             onPress={() => pick(run.id)}
                           />
                           <Button

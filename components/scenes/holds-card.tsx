@@ -276,7 +276,6 @@ function SupportEditor({
             key={axis}
             label={`Hold ${axis}`}
             pressed={support.axes.includes(axis)}
-            kind={support.axes.includes(axis) ? 'attention' : 'plain'}
             onPress={() => {
               const axes = support.axes.includes(axis)
                 ? support.axes.filter((a) => a !== axis)
@@ -289,7 +288,6 @@ function SupportEditor({
           label={picking ? 'Done picking' : 'Pick on the body'}
           hint={`Region of ${support.id}`}
           pressed={picking}
-          kind={picking ? 'attention' : 'plain'}
           onPress={() => onPick(!picking)}
         />
       </View>

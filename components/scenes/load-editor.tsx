@@ -69,7 +69,6 @@ export function LoadEditor({
           label={picking ? 'Done picking' : 'Pick on the body'}
           hint={`Region of ${load.id}`}
           pressed={picking}
-          kind={picking ? 'attention' : 'plain'}
           onPress={() => onPick(!picking)}
           style={{ alignSelf: 'flex-start' }}
         />

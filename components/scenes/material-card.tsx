@@ -38,14 +38,7 @@ export function MaterialCard({ document, edit, mass }: { document: SceneDocument
       {document.materials.length > 1 ? (
         <View style={{ flexDirection: 'row', flexWrap: 'wrap', gap: 8 }}>
           {document.materials.map((m, k) => (
-            <Button
-              key={m.id}
-              label={m.id}
-              hint={m.name}
-              pressed={k === at}
-              kind={k === at ? 'attention' : 'plain'}
-              onPress={() => setIndex(k)}
-            />
+            <Button key={m.id} label={m.id} hint={m.name} pressed={k === at} onPress={() => setIndex(k)} />
           ))}
         </View>
       ) : null}

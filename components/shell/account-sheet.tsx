@@ -20,7 +20,6 @@ export function AccountSheet({ onClose }: { onClose: () => void }) {
             key={each.id}
             label={each.name}
             pressed={each.id === production?.id}
-            kind={each.id === production?.id ? 'attention' : 'plain'}
             onPress={() => choose(each.id)}
           />
         ))}

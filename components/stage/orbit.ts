@@ -1,4 +1,4 @@
-import type { Vec3 } from '../../solver/scene';
+import type { Vec3 } from '../../solver/index';
 
 /** Where the camera stands: angles in radians about the upward axis, distances in metres. */
 export interface Orbit {
@@ -40,7 +40,7 @@ export class OrbitCamera {
     this.home = {
       azimuth: START_AZIMUTH,
       elevation: START_ELEVATION,
-      distance: (1.28 * radius) / (half * narrow),
+      distance: (1.02 * radius) / (half * narrow),
       target,
     };
     this.set(this.home);

@@ -30,7 +30,7 @@ export const STAGE_COLOURS: Record<Scheme, StageColours> = {
     bounceLight: '#E8DCC8',
     keyStrength: 1.75,
     skyStrength: 1.65,
-    shadow: 0.32,
+    shadow: 0.26,
   },
   night: {
     ground: '#1A1E24',

@@ -7,7 +7,7 @@ import {
   HemisphereLight,
   Mesh,
   MeshLambertMaterial,
-  PCFSoftShadowMap,
+  VSMShadowMap,
   PerspectiveCamera,
   PlaneGeometry,
   Raycaster,
@@ -63,10 +63,10 @@ export class StageScene {
     this.pixelRatio = Math.min(2, window.devicePixelRatio || 1);
     this.renderer.setPixelRatio(this.pixelRatio);
     this.renderer.shadowMap.enabled = true;
-    this.renderer.shadowMap.type = PCFSoftShadowMap;
+    this.renderer.shadowMap.type = VSMShadowMap;
     for (const [light, size] of [
-      [this.key, 1024],
-      [this.overhead, 512],
+      [this.key, 768],
+      [this.overhead, 256],
     ] as const) {
       light.castShadow = true;
       light.shadow.mapSize.set(size, size);
@@ -74,8 +74,11 @@ export class StageScene {
       light.shadow.normalBias = 0.01;
       this.scene.add(light, light.target);
     }
-    this.key.shadow.radius = 5;
-    this.overhead.shadow.radius = 9;
+    // Variance shadows blur well, which is what an overcast sky asks for.
+    this.key.shadow.radius = 7;
+    this.key.shadow.blurSamples = 12;
+    this.overhead.shadow.radius = 12;
+    this.overhead.shadow.blurSamples = 12;
     this.ground.receiveShadow = true;
     this.scene.add(this.sky, this.ground);
   }

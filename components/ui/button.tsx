@@ -38,8 +38,16 @@ export function Button({
   const off = disabledReason !== undefined && disabledReason !== null;
   const disabled = off || Boolean(working);
   const quiet = kind === 'quiet';
-  const ground = off ? 'transparent' : kind === 'primary' ? colors.kelp : quiet ? 'transparent' : colors.paper;
-  const border = kind === 'attention' ? colors.apricot : kind === 'primary' && !off ? colors.kelp : colors.edge;
+  const ground =
+    off || (quiet && !pressed)
+      ? 'transparent'
+      : kind === 'primary'
+        ? colors.kelp
+        : pressed
+          ? colors.kelpWash
+          : colors.paper;
+  const border =
+    kind === 'attention' ? colors.apricot : (kind === 'primary' || pressed) && !off ? colors.kelp : colors.edge;
   const ink = off ? 'ink2' : kind === 'primary' ? 'onKelp' : kind === 'attention' ? 'apricot' : quiet ? 'kelp' : 'ink';
   return (
     <View style={style}>
@@ -61,7 +69,7 @@ export function Button({
           focused && focusRing(colors.ink),
         ]}
       >
-        <Text variant="button" color={ink} numberOfLines={1} style={quiet && styles.underlined}>
+        <Text variant="button" color={ink} numberOfLines={1} style={quiet && !off && styles.underlined}>
           {working ? working : label}
         </Text>
         {cost && !working ? (

@@ -1,5 +1,6 @@
 import type { BoundKernels } from '../kernels/kernels';
-import { lameOf, lawOf, type Lame, type Law } from '../material/law';
+import { lameOf, type Lame, type Law } from '../material/law';
+import { lawOf } from '../material/laws';
 import type { Prepared } from '../quadrature/prepared';
 import type { SceneMaterial } from '../scene';
 

@@ -1,7 +1,4 @@
 import type { MaterialLaw } from '../scene';
-import { neoHookeanA } from './neo-hookean-a';
-import { neoHookeanB } from './neo-hookean-b';
-import { stableNeoHookean } from './stable-neo-hookean';
 
 /** Lamé's constants, Pa. */
 export interface Lame {
@@ -18,14 +15,6 @@ export interface Law {
   grouped: boolean;
   volumetric(out: Float64Array, J: number, lame: Lame): void;
 }
-
-const LAWS: Record<MaterialLaw, Law> = {
-  'stable-neo-hookean': stableNeoHookean,
-  'neo-hookean-a': neoHookeanA,
-  'neo-hookean-b': neoHookeanB,
-};
-
-export const lawOf = (name: MaterialLaw): Law => LAWS[name];
 
 /** μ = E / 2(1+ν), λ = Eν / (1+ν)(1−2ν). Throws a RangeError outside E > 0, 0 ≤ ν < 0.5. */
 export function lameOf(youngsModulus: number, poissonsRatio: number): Lame {
