@@ -121,7 +121,7 @@ export function Workbench({ scene, revision: opened, patches, draft }: Props) {
     <Button
       kind="primary"
       label={wide ? `Bake ${frames} frames` : 'Bake'}
-      cost={seconds ? `about ${figures(seconds, 2)} s` : undefined}
+      cost={seconds ? `${wide ? 'about ' : ''}${figures(seconds, 2)} s` : undefined}
       disabledReason={bakeReason}
       onPress={() => void startBake()}
       style={wide ? undefined : styles.bake}

@@ -73,7 +73,7 @@ export function Button({
           {working ? working : label}
         </Text>
         {cost && !working ? (
-          <Text variant="small" color={ink}>
+          <Text variant="small" color={ink} numberOfLines={1}>
             {cost}
           </Text>
         ) : null}
@@ -91,7 +91,7 @@ const styles = StyleSheet.create({
   button: {
     minHeight: TARGET,
     minWidth: TARGET,
-    paddingHorizontal: space.l,
+    paddingHorizontal: space.m,
     flexDirection: 'row',
     alignItems: 'center',
     justifyContent: 'center',
