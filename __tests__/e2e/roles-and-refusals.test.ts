@@ -47,10 +47,15 @@ it('an artist opens a scene live but is offered neither saving nor baking, and t
   const status = await page.evaluate(async (id) => {
     const renewed = await fetch('/api/session/refresh', { method: 'POST', headers: { 'X-Lollop': '1' } });
     const { accessToken } = (await renewed.json()) as { accessToken: string };
+    const Authorization = `Bearer ${accessToken}`;
+    const scene = await (await fetch(`/api/scenes/${id}`, { headers: { Authorization } })).json();
+    const revision = await (
+      await fetch(`/api/revisions/${scene.latestRevision.id}`, { headers: { Authorization } })
+    ).json();
     const answer = await fetch(`/api/scenes/${id}/revisions`, {
       method: 'POST',
-      headers: { 'Content-Type': 'application/json', Authorization: `Bearer ${accessToken}` },
-      body: JSON.stringify({ basedOn: 1, remark: '', document: {} }),
+      headers: { 'Content-Type': 'application/json', Authorization },
+      body: JSON.stringify({ basedOn: 1, remark: '', document: revision.document }),
     });
     return answer.status;
   }, sceneId);

@@ -112,7 +112,7 @@ function ModelPage({ model, patches, fault }: { model: Model; patches: Patch[] |
         <View style={[styles.question, { backgroundColor: colors.apricotWash, borderColor: colors.apricot }]}>
           <Text variant="card" level={2}>{`Is it ${lengthText(longest, unit)} long?`}</Text>
           <Text variant="dense">
-            {`${report.declaredUnit ? `The file says ${report.declaredUnit.name}` : 'The file names no unit; millimetres were taken'}. That is about as long ${likeWhat(longest)}.`}
+            {`${report.declaredUnit ? `The file says ${report.declaredUnit.name}` : `The file names no unit; ${MODEL_UNITS.find((u) => u.metres === model.unit)?.name ?? 'metres'} were taken`}. That is about as long ${likeWhat(longest)}.`}
           </Text>
           <View style={styles.answers}>
             <Button

@@ -33,7 +33,7 @@ export function WorkbenchScreen({ sceneId }: { sceneId: string }) {
   return (
     <QueryState query={scene} loading="Fetching the scene …">
       {() =>
-        opened.scene && opened.revision && opened.patches ? (
+        scene.isFetchedAfterMount && opened.scene && opened.revision && opened.patches ? (
           <Workbench
             key={sceneId}
             scene={opened.scene}

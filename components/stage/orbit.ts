@@ -40,7 +40,7 @@ export class OrbitCamera {
     this.home = {
       azimuth: START_AZIMUTH,
       elevation: START_ELEVATION,
-      distance: (1.02 * radius) / (half * narrow),
+      distance: (1.14 * radius) / (half * narrow),
       target,
     };
     this.set(this.home);

@@ -236,6 +236,8 @@ export class StageScene {
     this.pixelRatio = Math.max(0.75, this.pixelRatio * 0.8);
     this.renderer.setPixelRatio(this.pixelRatio);
     this.renderer.setSize(this.width, this.height, false);
+    // Resizing empties the canvas, and nobody may ask for another picture soon.
+    this.renderer.render(this.scene, this.camera);
   }
 
   /** Place on the canvas, in CSS pixels, of a point in metres; null behind the camera. */

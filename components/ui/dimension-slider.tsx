@@ -136,14 +136,27 @@ export function DimensionSlider(props: Props) {
           >
             <TextInput
               aria-label={`${label}, typed${unit ? `, ${unit}` : ''}`}
-              value={typing ?? `${format(value)} ${unit}`.trim()}
+              value={typing ?? format(value)}
+              selectTextOnFocus
               onFocus={() => setTyping(format(value))}
               onChangeText={setTyping}
               onBlur={commit}
               onSubmitEditing={commit}
               inputMode="decimal"
-              style={[variants.readout, styles.tagText, { color: refused ? colors.apricot : colors.ink }]}
+              style={[
+                variants.readout,
+                styles.tagText,
+                {
+                  color: refused ? colors.apricot : colors.ink,
+                  width: unit ? 9.7 * (typing ?? format(value)).length + 6 : '100%',
+                },
+              ]}
             />
+            {unit ? (
+              <Text variant="readout" color={refused ? 'apricot' : 'ink'} numberOfLines={1} style={styles.unit}>
+                {unit}
+              </Text>
+            ) : null}
           </View>
         ) : null}
       </View>
@@ -194,6 +207,16 @@ const styles = StyleSheet.create({
   body: { height: 44, justifyContent: 'center' },
   line: { height: 44, justifyContent: 'center', cursor: 'pointer', userSelect: 'none' },
   drawing: { pointerEvents: 'none' },
-  tag: { position: 'absolute', height: 34, borderWidth: 1, borderRadius: RADIUS, justifyContent: 'center' },
-  tagText: { textAlign: 'center', width: '100%', height: 32, outlineWidth: 0 },
+  tag: {
+    position: 'absolute',
+    height: 34,
+    borderWidth: 1,
+    borderRadius: RADIUS,
+    flexDirection: 'row',
+    alignItems: 'center',
+    justifyContent: 'center',
+    overflow: 'hidden',
+  },
+  unit: { pointerEvents: 'none' },
+  tagText: { textAlign: 'center', height: 32, outlineWidth: 0 },
 });
