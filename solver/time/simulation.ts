@@ -256,7 +256,7 @@ export class Simulation {
     potential.addConstant(this.K, 1e-3 * dt * dt);
     this.constantFor = null;
     this.factorFresh = false;
-    for (let u = 0; u < a.length; u++) a[u] = 0;
+    for (let u = 0; u < a.length; u++) a[u] = -startGradient[u]!;
     if (this.bound.factor(this.K)) this.bound.solve(this.K, a);
     else a.fill(0);
     this.hasGradient = true;

@@ -1,0 +1,66 @@
+import {
+  bestKernels,
+  prepare,
+  scalePatch,
+  shapePatches,
+  Simulation,
+  type Prepared,
+  type Scene,
+} from '../../solver/index';
+
+/** Prepares a scene of built-in shapes. */
+export function prepareScene(scene: Scene): Prepared {
+  if (scene.geometry.kind !== 'shapes') throw new Error('This helper takes built-in shapes.');
+  const patches = scene.geometry.shapes.flatMap(shapePatches).map((patch) => scalePatch(patch, scene.unit));
+  return prepare(scene, patches);
+}
+
+export const simulate = (scene: Scene): Simulation => new Simulation(prepareScene(scene), scene, bestKernels());
+
+/** A cube of edge 1 m without supports or loads, of one material. */
+export function cube(change: Partial<Scene> = {}, material: Partial<Scene['materials'][number]> = {}): Scene {
+  return {
+    format: 'lollop-scene',
+    version: 1,
+    name: 'Cube',
+    geometry: { kind: 'shapes', shapes: [{ kind: 'box', min: [0, 0, 0], max: [1, 1, 1], gap: 0 }] },
+    unit: 1,
+    up: 'z',
+    parts: { count: 4, order: 'quadratic' },
+    bondDistance: 0,
+    materials: [
+      {
+        id: 'M1',
+        name: 'Rubber',
+        law: 'stable-neo-hookean',
+        youngsModulus: 1e6,
+        poissonsRatio: 0.3,
+        density: 1000,
+        ...material,
+      },
+    ],
+    supports: [],
+    loads: [],
+    obstacles: [],
+    gauges: [],
+    time: { kind: 'motion', framesPerSecond: 24, frames: 12, substeps: 1, method: 'backward-euler' },
+    ...change,
+  };
+}
+
+/** Coefficients of the affine map x = A X + b. */
+export function affineCoefficients({ parts }: Prepared, A: readonly number[], b: readonly number[]): Float64Array {
+  const { count, basis, centres, scales } = parts;
+  const c = new Float64Array(3 * count * basis);
+  for (let part = 0; part < count; part++) {
+    for (let i = 0; i < 3; i++) {
+      const at = (part * 3 + i) * basis;
+      c[at] = b[i]!;
+      for (let d = 0; d < 3; d++) {
+        c[at]! += A[3 * i + d]! * centres[3 * part + d]!;
+        c[at + 1 + d] = A[3 * i + d]! * scales[part]!;
+      }
+    }
+  }
+  return c;
+}
