@@ -119,6 +119,7 @@ describe.each<Device>(['wide', 'phone'])('on a %s window', (device) => {
     await artist.page.getByRole('button', { name: 'Play' }).click();
     await artist.page.getByRole('button', { name: 'Pause' }).click();
     expect(await sideways(artist.page)).toBe(0);
+    await artist.page.waitForTimeout(1500);
     await shot(artist.page, `${device}-player`);
     await artist.context.close();
 
