@@ -137,7 +137,7 @@ export const DEMO_SCENES: readonly DemoScene[] = [
     name: 'Gull in a breeze',
     document: {
       materials: [
-        { id: 'M1', name: 'Inflated skin, as soft foam', law, youngsModulus: 40_000, poissonsRatio: 0.3, density: 40 },
+        { id: 'M1', name: 'Inflated body, as firm foam', law, youngsModulus: 2e6, poissonsRatio: 0.3, density: 25 },
       ],
       bondDistance: 0.012,
       supports: [
@@ -151,7 +151,7 @@ export const DEMO_SCENES: readonly DemoScene[] = [
       ],
       loads: [
         gravity,
-        { id: 'L2', name: 'Wind', kind: 'wind', velocity: [-7, 3, 0], dragCoefficient: 1.2, airDensity: 1.225 },
+        { id: 'L2', name: 'Wind', kind: 'wind', velocity: [-3.5, 1.5, 0], dragCoefficient: 1.2, airDensity: 1.225 },
       ],
       gauges: [{ id: 'G1', name: 'Beak', point: [0.98, 0, 1.25] }],
       time: motion(72, 2),
@@ -162,7 +162,7 @@ export const DEMO_SCENES: readonly DemoScene[] = [
     model: 'Bell buoy',
     name: 'Buoy, dropped',
     document: {
-      materials: [{ id: 'M1', name: 'Soft foam', law, youngsModulus: 150_000, poissonsRatio: 0.3, density: 90 }],
+      materials: [{ id: 'M1', name: 'Soft foam', law, youngsModulus: 400_000, poissonsRatio: 0.3, density: 90 }],
       bondDistance: 0.01,
       supports: [],
       loads: [gravity],

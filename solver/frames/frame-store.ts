@@ -46,6 +46,9 @@ export function encodeChunk(
     throw new RangeError(`A chunk holds 1 to ${MAX_POSES} poses of one length.`);
   }
   const quantum = options.mode === 'quantised' ? options.quantum : 0;
+  if (options.mode === 'quantised' && !(quantum > 0 && Number.isFinite(quantum))) {
+    throw new RangeError(`A quantum is a length greater than 0, not ${quantum}.`);
+  }
   const payload = options.mode === 'quantised' ? packQuantised(poses, quantum) : packLossless(poses);
   const bytes = new Uint8Array(HEADER + payload.length);
   const view = new DataView(bytes.buffer);
