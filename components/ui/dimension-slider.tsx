@@ -1,6 +1,6 @@
 import { useEffect, useRef, useState } from 'react';
 import { StyleSheet, TextInput, View, type GestureResponderEvent } from 'react-native';
-import Svg, { Line, Path } from 'react-native-svg';
+import Svg, { Path } from 'react-native-svg';
 import { RADIUS, space, type as variants } from '../theme/tokens';
 import { useTheme } from '../theme/use-theme';
 import { focusRing } from './focus-ring';
@@ -24,8 +24,6 @@ interface Props {
   refuse?: (value: number) => string | null;
   onChange: (value: number) => void;
 }
-
-const HEIGHT = 36;
 
 /** The drafted dimension as a control: drag the tag, tap it to type, arrows step. */
 export function DimensionSlider(props: Props) {
@@ -78,7 +76,9 @@ export function DimensionSlider(props: Props) {
     setTyping(null);
   };
   const tagWidth = Math.max(64, 9.7 * (format(value).length + unit.length + 1) + 20);
-  const left = Math.max(0, Math.min(width - tagWidth, share(value) * width - tagWidth / 2));
+  // Placed by the browser, so that it stands right in the first picture, before anything was measured.
+  const left =
+    `clamp(0px, calc(${(100 * share(value)).toFixed(2)}% - ${tagWidth / 2}px), calc(100% - ${tagWidth}px))` as `${number}%`;
   const edge = refused ? colors.apricot : colors.kelp;
   return (
     <View style={styles.slider}>
@@ -109,56 +109,47 @@ export function DimensionSlider(props: Props) {
           onResponderGrant={drag}
           onResponderMove={drag}
         >
-          {width > 0 ? (
-            <Svg width={width} height={HEIGHT} style={styles.drawing}>
-              <Line x1={0.5} x2={0.5} y1={5} y2={31} stroke={colors.edge} />
-              <Line x1={width - 0.5} x2={width - 0.5} y1={5} y2={31} stroke={colors.edge} />
-              <Line x1={0} x2={width} y1={18} y2={18} stroke={colors.edge} />
-              <Path d={`M1 18l9 -3.5v7zM${width - 1} 18l-9 -3.5v7z`} fill={colors.edge} />
-              {reference !== undefined ? (
-                <Line
-                  x1={share(reference) * width}
-                  x2={share(reference) * width}
-                  y1={9}
-                  y2={27}
-                  stroke={colors.ink2}
-                  strokeDasharray="2 2"
-                  strokeWidth={1.5}
-                />
-              ) : null}
-            </Svg>
+          <View style={[styles.rule, { backgroundColor: colors.edge }]} />
+          <View style={[styles.tick, { left: 0, backgroundColor: colors.edge }]} />
+          <View style={[styles.tick, { right: 0, backgroundColor: colors.edge }]} />
+          <Svg width={10} height={8} style={[styles.arrow, { left: 1 }]}>
+            <Path d="M0 4l9 -3.5v7z" fill={colors.edge} />
+          </Svg>
+          <Svg width={10} height={8} style={[styles.arrow, { right: 1 }]}>
+            <Path d="M10 4l-9 -3.5v7z" fill={colors.edge} />
+          </Svg>
+          {reference !== undefined ? (
+            <View style={[styles.reference, { left: `${100 * share(reference)}%`, borderColor: colors.ink2 }]} />
           ) : null}
         </View>
-        {width > 0 ? (
-          <View
-            style={[styles.tag, { left, width: tagWidth, borderColor: edge, backgroundColor: colors.paper }]}
-            pointerEvents="box-none"
-          >
-            <TextInput
-              aria-label={`${label}, typed${unit ? `, ${unit}` : ''}`}
-              value={typing ?? format(value)}
-              selectTextOnFocus
-              onFocus={() => setTyping(format(value))}
-              onChangeText={setTyping}
-              onBlur={commit}
-              onSubmitEditing={commit}
-              inputMode="decimal"
-              style={[
-                variants.readout,
-                styles.tagText,
-                {
-                  color: refused ? colors.apricot : colors.ink,
-                  width: unit ? 9.7 * (typing ?? format(value)).length + 6 : '100%',
-                },
-              ]}
-            />
-            {unit ? (
-              <Text variant="readout" color={refused ? 'apricot' : 'ink'} numberOfLines={1} style={styles.unit}>
-                {unit}
-              </Text>
-            ) : null}
-          </View>
-        ) : null}
+        <View
+          style={[styles.tag, { left, width: tagWidth, borderColor: edge, backgroundColor: colors.paper }]}
+          pointerEvents="box-none"
+        >
+          <TextInput
+            aria-label={`${label}, typed${unit ? `, ${unit}` : ''}`}
+            value={typing ?? format(value)}
+            selectTextOnFocus
+            onFocus={() => setTyping(format(value))}
+            onChangeText={setTyping}
+            onBlur={commit}
+            onSubmitEditing={commit}
+            inputMode="decimal"
+            style={[
+              variants.readout,
+              styles.tagText,
+              {
+                color: refused ? colors.apricot : colors.ink,
+                width: unit ? 9.7 * (typing ?? format(value)).length + 6 : '100%',
+              },
+            ]}
+          />
+          {unit ? (
+            <Text variant="readout" color={refused ? 'apricot' : 'ink'} numberOfLines={1} style={styles.unit}>
+              {unit}
+            </Text>
+          ) : null}
+        </View>
       </View>
       <View style={styles.head}>
         <Text variant="small" color="ink2">
@@ -206,7 +197,10 @@ const styles = StyleSheet.create({
   head: { flexDirection: 'row', justifyContent: 'space-between', alignItems: 'baseline', gap: space.s },
   body: { height: 44, justifyContent: 'center' },
   line: { height: 44, justifyContent: 'center', cursor: 'pointer', userSelect: 'none' },
-  drawing: { pointerEvents: 'none' },
+  rule: { height: 1, width: '100%' },
+  tick: { position: 'absolute', top: 9, width: 1, height: 26 },
+  arrow: { position: 'absolute', top: 18, pointerEvents: 'none' },
+  reference: { position: 'absolute', top: 13, height: 18, borderLeftWidth: 2, borderStyle: 'dotted' },
   tag: {
     position: 'absolute',
     height: 34,
