@@ -67,8 +67,13 @@ export function minimise(
   if (guess && Number.isFinite(energy) && problem.worstJ() > SAFE_GUESS_J) c.set(guess);
   else energy = problem.evaluate(c, r);
   let fresh = !(options.factor === 'lagged' && options.keepFactor);
-  // Once a lagged factor has failed to shrink the steps, every step of this solve gets its own.
+  // A lagged factor that fails to shrink the steps is renewed; when the new one fails too, every step gets its own.
   let every = options.factor === 'every';
+  let failures = 0;
+  const renew = () => {
+    fresh = true;
+    every ||= ++failures > 1;
+  };
   let factors = 0;
   let previous = Infinity;
   const changes: number[] = [];
@@ -91,7 +96,7 @@ export function minimise(
     if (!Number.isFinite(change)) break;
     // A stale factor that does not help is renewed at the same pose.
     if (!renewed && (change > SLOW * previous || slope >= 0)) {
-      every = true;
+      renew();
       previous = Infinity;
       continue;
     }
@@ -114,7 +119,7 @@ export function minimise(
       // Put the problem's own record of the pose back to c before trying again or giving up.
       energy = problem.evaluate(c, r);
       if (renewed) return { converged: change < tolerance, steps: step, factors, change, changes };
-      every = true;
+      renew();
       previous = Infinity;
       continue;
     }
@@ -123,7 +128,7 @@ export function minimise(
     problem.stepped(delta, s);
     changes.push(change);
     previous = s < 1 ? Infinity : change;
-    if (s < 1) every = true;
+    if (s < 1) renew();
     if (s === 1 && change <= tolerance) return { converged: true, steps: step + 1, factors, change, changes };
   }
   return { converged: false, steps: maxSteps, factors, change: changes[changes.length - 1] ?? Infinity, changes };
