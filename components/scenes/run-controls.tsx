@@ -8,9 +8,18 @@ import type { Live } from './use-live';
 export type Show = 'clay' | 'parts' | 'see-through';
 
 /** Play, step, back to rest, and how fast against the clock. */
-export function RunControls({ live, compact = false }: { live: Live; compact?: boolean }) {
+export function RunControls({
+  live,
+  baking = false,
+  compact = false,
+}: {
+  live: Live;
+  /** the solver is busy with a bake */
+  baking?: boolean;
+  compact?: boolean;
+}) {
   const [speed, setSpeed] = useState<LiveSpeed>('real-time');
-  const waiting = live.ready ? null : '';
+  const waiting = live.ready && !baking ? null : '';
   return (
     <View style={{ flexDirection: 'row', gap: 8 }}>
       {live.playing ? (

@@ -139,7 +139,10 @@ export function useLive(
 
 export type Live = ReturnType<typeof useLive>;
 
+/** Rounding at rest is no reading: it would fill the trace's axis with noise. */
+const NOISE = 1e-9;
+
 function push(list: number[], value: number): void {
-  list.push(value);
+  list.push(Math.abs(value) < NOISE ? 0 : value);
   if (list.length > TRACE_LENGTH) list.shift();
 }

@@ -22,6 +22,7 @@ import { TitleBlock } from '../ui/title-block';
 import { keepDraft, type Draft } from './draft-store';
 import { HoldsCard } from './holds-card';
 import { LiveTraces } from './live-traces';
+import { pickedPatches, togglePatch } from './picking';
 import { MaterialCard } from './material-card';
 import { PartsCard } from './parts-card';
 import { RunControls, ShowControls, type Show } from './run-controls';
@@ -117,6 +118,7 @@ export function Workbench({ scene, revision: opened, patches, draft }: Props) {
         : !ready
           ? 'The body is being prepared.'
           : null;
+  const shownFrame = baking.bake ? String(baking.bake.pose) : frameNumber(frame?.time, time);
   const bakeButton = (
     <Button
       kind="primary"
@@ -189,9 +191,11 @@ export function Workbench({ scene, revision: opened, patches, draft }: Props) {
               ? `${live.progress} …`
               : live.playing
                 ? `Live, ${rate ? figures(rate) : '…'} steps/s`
-                : changed
-                  ? 'Not yet saved.'
-                  : 'At hand.'}
+                : baking.bake
+                  ? 'Baking.'
+                  : changed
+                    ? 'Not yet saved.'
+                    : 'At hand.'}
         </Text>
         {live.playing && !picking ? (
           <Text variant="note" color="ink2">
@@ -206,11 +210,11 @@ export function Workbench({ scene, revision: opened, patches, draft }: Props) {
           { label: 'Revision', value: `${revision.number}${changed ? ' + draft' : ''}`, mono: true },
           { label: 'Mass', value: ready ? massText(ready.mass) : '…', mono: true },
           { label: 'Unit', value: unit, mono: true },
-          { label: 'Frame', value: frameNumber(frame?.time, time), mono: true },
+          { label: 'Frame', value: shownFrame, mono: true },
         ]}
         phone={[
           { label: 'Revision', value: `${revision.number}${changed ? ' + draft' : ''}`, mono: true },
-          { label: 'Frame', value: frameNumber(frame?.time, time), mono: true },
+          { label: 'Frame', value: shownFrame, mono: true },
         ]}
       />
     </StageView>
@@ -292,7 +296,7 @@ export function Workbench({ scene, revision: opened, patches, draft }: Props) {
       <View style={styles.fill}>
         <View style={styles.fill}>{stage}</View>
         <View style={[styles.controls, { borderTopColor: colors.hair }]}>
-          <RunControls live={live} />
+          <RunControls live={live} baking={baking.bake !== null} />
           <View style={styles.fill} />
           <ShowControls show={show} onShow={setShow} />
         </View>
@@ -337,25 +341,6 @@ export function Workbench({ scene, revision: opened, patches, draft }: Props) {
 
 function frameNumber(time: number | undefined, setting: Revision['document']['time']): string {
   return time === undefined || setting.kind !== 'motion' ? '0' : String(Math.round(time * setting.framesPerSecond));
-}
-
-type Document = Revision['document'];
-
-function pickedPatches(document: Document, id: string | null): ReadonlySet<number> {
-  const item = [...document.supports, ...document.loads].find((each) => each.id === id);
-  return new Set(item && 'region' in item && item.region.kind === 'patches' ? item.region.patches : []);
-}
-
-/** Adds a patch to the region of a support or load, or takes it out; a region of another kind becomes patches. */
-function togglePatch(document: Document, id: string, patch: number): Document {
-  const toggle = <T extends { id: string }>(item: T): T => {
-    if (item.id !== id || !('region' in item)) return item;
-    const region = item.region as Document['supports'][number]['region'];
-    const now = region.kind === 'patches' ? region.patches : [];
-    const patches = now.includes(patch) ? now.filter((p) => p !== patch) : [...now, patch].sort((a, b) => a - b);
-    return patches.length === 0 ? item : { ...item, region: { kind: 'patches', patches } };
-  };
-  return { ...document, supports: document.supports.map(toggle), loads: document.loads.map(toggle) };
 }
 
 const styles = StyleSheet.create({
