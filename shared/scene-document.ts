@@ -181,11 +181,11 @@ export const sceneDocumentSchema = z
       });
     }
     const loaded = scene.loads.length > 0;
-    if (scene.time.kind === 'static' && loaded && scene.supports.length === 0 && scene.obstacles.length === 0) {
+    if (scene.time.kind === 'static' && loaded && scene.supports.length === 0) {
       context.addIssue({
         code: 'custom',
         path: ['supports'],
-        message: 'Nothing holds the body under its loads. Add a support or a ground, or choose motion.',
+        message: 'Nothing holds the body under its loads. Add a support, or choose motion.',
       });
     }
   });

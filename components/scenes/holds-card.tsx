@@ -51,6 +51,29 @@ export function HoldsCard({ document, edit, ready, unit, picking, onPick }: Prop
       ],
     }));
   };
+  /** All of the surface within a fiftieth of the body's length of the plane at one end along x. */
+  const addEnd = (side: 'left' | 'right') => {
+    if (!bounds) return;
+    const x = side === 'left' ? bounds.min[0] : bounds.max[0];
+    edit('support-add', (d) => ({
+      ...d,
+      supports: [
+        ...d.supports,
+        {
+          id: freeId('S', d.supports),
+          name: side === 'left' ? 'Left end' : 'Right end',
+          region: {
+            kind: 'plane',
+            point: [x, (bounds.min[1] + bounds.max[1]) / 2, (bounds.min[2] + bounds.max[2]) / 2],
+            normal: [1, 0, 0],
+            tolerance: (bounds.max[0] - bounds.min[0]) / 50,
+          },
+          axes: ['x', 'y', 'z'],
+          keys: [],
+        },
+      ],
+    }));
+  };
   return (
     <Card title="Supports and loads" summary={`${supports.length} held, ${loads.length} pushing`}>
       {supports.map((support) => (
@@ -69,6 +92,8 @@ export function HoldsCard({ document, edit, ready, unit, picking, onPick }: Prop
       ) : null}
       <View style={{ flexDirection: 'row', flexWrap: 'wrap', gap: 8 }}>
         <Button label="Hold the base" onPress={addBase} />
+        <Button label="Hold the left end" onPress={() => addEnd('left')} />
+        <Button label="Hold the right end" onPress={() => addEnd('right')} />
         <Button
           label="Hold by touch"
           onPress={() => {
