@@ -13,6 +13,16 @@ const blocked = ['.data', 'dist', 'dist-server', 'server', 'test-results'].map(
 );
 config.resolver.blockList = [...[config.resolver.blockList ?? []].flat(), ...blocked];
 
+// zod re-exports its messages in fifty languages. The bundler keeps whatever is re-exported, 340 kB that the first
+// page would load and nobody reads, so its list of languages becomes the one that zod itself starts with.
+const ZOD_LANGUAGES = /[\\/]zod[\\/]v4[\\/]locales[\\/]index\.(js|cjs)$/;
+config.resolver.resolveRequest = (context, name, platform) => {
+  const found = context.resolveRequest(context, name, platform);
+  return found.type === 'sourceFile' && ZOD_LANGUAGES.test(found.filePath)
+    ? { ...found, filePath: found.filePath.replace(/index\.(c?js)$/, 'en.$1') }
+    : found;
+};
+
 // In development the API runs on its own port; the bundler's server passes /api on and sets the isolation headers
 // that the production server sets.
 const api = new URL(process.env.LOLLOP_API ?? 'http://127.0.0.1:4050');
