@@ -14,7 +14,7 @@ const swc = {
 
 // Packages that ship untranspiled sources and must pass through Babel in the React projects.
 const transpiled =
-  'node_modules/(?!((jest-)?react-native|@react-native(-community)?|expo(nent)?|@expo(nent)?/.*|@expo-google-fonts/.*|react-navigation|@react-navigation/.*|react-native-svg|three(-mesh-bvh)?|@react-three|d3-[a-z]+|internmap|@noble)/?)';
+  'node_modules/(?!((jest-)?react-native|@react-native(-community)?|expo(nent)?|@expo(nent)?/.*|@expo-google-fonts/.*|react-navigation|@react-navigation/.*|react-native-svg|three(-mesh-bvh)?|@react-three|d3-[a-z]+|internmap|@noble|standard-navigation)/?)';
 const assets = { '\\.(woff2?|wasm|glb)$': '<rootDir>/__tests__/support/asset-stub.js' };
 
 /** @type {import('jest').Config} */

@@ -8,6 +8,7 @@ import { useSession } from '../api/session';
 import { Button } from '../ui/button';
 import { Card } from '../ui/card';
 import { DimensionSlider } from '../ui/dimension-slider';
+import { Fact } from '../ui/fact';
 import { Row } from '../ui/row';
 import { Sheet } from '../ui/sheet';
 import { Caution } from '../ui/states';
@@ -88,7 +89,7 @@ export function MaterialCard({ document, edit, mass }: { document: SceneDocument
         refuse={(v) => (v > 0 ? null : 'The density must be greater than 0.')}
         onChange={(v) => set('density', { density: v })}
       />
-      <Row title="Mass of the body" value={mass === null ? '…' : massText(mass)} />
+      <Fact name="Mass of the body" value={mass === null ? '…' : massText(mass)} />
       {choosing ? (
         <PresetSheet
           onClose={() => setChoosing(false)}

@@ -5,7 +5,7 @@ import type { Ready } from '../../solver/index';
 import { ChoiceOfFew } from '../ui/choice-of-few';
 import { Card } from '../ui/card';
 import { DimensionSlider } from '../ui/dimension-slider';
-import { Row } from '../ui/row';
+import { Fact } from '../ui/fact';
 import { Text } from '../ui/text';
 import type { Edit } from './edit';
 
@@ -40,9 +40,9 @@ export function PartsCard({
         refuse={(v) => (Number.isInteger(v) && v >= 1 ? null : 'Give a whole number from 1.')}
         onChange={(count) => edit('part-count', (d) => ({ ...d, parts: { ...d.parts, count: Math.round(count) } }))}
       />
-      <Row title="Speed now" value={rate === null ? 'paused' : `${figures(rate)} steps/s`} />
+      <Fact name="Speed now" value={rate === null ? 'paused' : `${figures(rate)} steps/s`} />
       {forecast !== null ? (
-        <Row title={`Forecast at ${document.parts.count} parts`} value={`about ${figures(forecast, 2)} steps/s`} />
+        <Fact name={`Forecast at ${document.parts.count} parts`} value={`about ${figures(forecast, 2)} steps/s`} />
       ) : null}
       <ChoiceOfFew
         label="Detail of a part"
@@ -66,12 +66,12 @@ export function PartsCard({
       />
       {ready ? (
         <View style={{ gap: 4 }}>
-          <Row
-            title="Pieces"
+          <Fact
+            name="Pieces"
             value={String(ready.bodies.length)}
             note={ready.bodies.map((b) => `${b.partCount} part${b.partCount === 1 ? '' : 's'}`).join(', ')}
           />
-          <Row title="Diagonal" value={lengthText(diagonal, unit)} />
+          <Fact name="Diagonal" value={lengthText(diagonal, unit)} />
           {ready.report.remarks.map((remark) => (
             <Text key={remark} variant="note" color="ink2">
               {remark}

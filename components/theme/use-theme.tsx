@@ -1,4 +1,4 @@
-import { createContext, useContext, useMemo, useState, type ReactNode } from 'react';
+import { createContext, useContext, useLayoutEffect, useMemo, useState, type ReactNode } from 'react';
 import { useColorScheme } from 'react-native';
 import { DAY, NIGHT, type Palette } from './palette';
 
@@ -28,6 +28,7 @@ export function ThemeProvider({ children }: { children: ReactNode }) {
   const system = useColorScheme() === 'dark' ? 'night' : 'day';
   const [choice, setChoice] = useState<ThemeChoice>(stored);
   const scheme = choice === 'system' ? system : choice;
+  useLayoutEffect(() => paintDocument(scheme), [scheme]);
   const value = useMemo<Theme>(
     () => ({
       scheme,
@@ -45,6 +46,16 @@ export function ThemeProvider({ children }: { children: ReactNode }) {
     [scheme, choice],
   );
   return <ThemeContext.Provider value={value}>{children}</ThemeContext.Provider>;
+}
+
+/** What lies behind the screens, and the browser's own parts, follow the chosen theme and not only the system. */
+function paintDocument(scheme: Theme['scheme']): void {
+  const { style } = document.documentElement;
+  const colors = scheme === 'night' ? NIGHT : DAY;
+  style.setProperty('--ink', colors.ink);
+  style.colorScheme = scheme === 'night' ? 'dark' : 'light';
+  style.backgroundColor = colors.page;
+  document.body.style.backgroundColor = colors.page;
 }
 
 export function useTheme(): Theme {

@@ -1,8 +1,6 @@
-import { useState } from 'react';
 import { Pressable, StyleSheet, View, type StyleProp, type ViewStyle } from 'react-native';
 import { RADIUS, space, TARGET } from '../theme/tokens';
 import { useTheme } from '../theme/use-theme';
-import { focusRing } from './focus-ring';
 import { Text } from './text';
 
 interface Props {
@@ -17,6 +15,8 @@ interface Props {
   /** for screen readers, when the label alone is not enough */
   hint?: string;
   pressed?: boolean;
+  /** less air inside, for four in a row on a phone */
+  tight?: boolean;
   onPress: () => void;
   style?: StyleProp<ViewStyle>;
 }
@@ -30,11 +30,11 @@ export function Button({
   disabledReason,
   hint,
   pressed,
+  tight,
   onPress,
   style,
 }: Props) {
   const { colors } = useTheme();
-  const [focused, setFocused] = useState(false);
   const off = disabledReason !== undefined && disabledReason !== null;
   const disabled = off || Boolean(working);
   const quiet = kind === 'quiet';
@@ -59,14 +59,12 @@ export function Button({
         accessibilityHint={hint}
         disabled={disabled}
         onPress={onPress}
-        onFocus={() => setFocused(true)}
-        onBlur={() => setFocused(false)}
         style={[
           styles.button,
           !quiet && styles.framed,
           { backgroundColor: ground, borderColor: border },
           off && styles.dashed,
-          focused && focusRing(colors.ink),
+          tight && styles.tight,
         ]}
       >
         <Text variant="button" color={ink} numberOfLines={1} style={quiet && !off && styles.underlined}>
@@ -99,6 +97,7 @@ const styles = StyleSheet.create({
     borderRadius: RADIUS,
   },
   framed: { borderWidth: 1 },
+  tight: { paddingHorizontal: space.xs },
   dashed: { borderStyle: 'dashed' },
   underlined: { textDecorationLine: 'underline' },
   reason: { marginTop: space.xs },

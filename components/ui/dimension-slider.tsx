@@ -45,7 +45,6 @@ export function DimensionSlider(props: Props) {
   const [width, setWidth] = useState(0);
   const [typing, setTyping] = useState<string | null>(null);
   const [refused, setRefused] = useState<string | null>(null);
-  const [focused, setFocused] = useState(false);
   const line = useRef<View>(null);
   const share = (v: number) => {
     const t = scale === 'log' ? Math.log(v / min) / Math.log(max / min) : (v - min) / (max - min);
@@ -100,9 +99,7 @@ export function DimensionSlider(props: Props) {
           aria-valuenow={value}
           aria-valuetext={`${format(value)} ${unit}`.trim()}
           tabIndex={0}
-          onFocus={() => setFocused(true)}
-          onBlur={() => setFocused(false)}
-          style={[styles.line, focused && focusRing(colors.ink)]}
+          style={styles.line}
           onStartShouldSetResponder={() => true}
           onMoveShouldSetResponder={() => true}
           onResponderTerminationRequest={() => false}
@@ -123,7 +120,11 @@ export function DimensionSlider(props: Props) {
           ) : null}
         </View>
         <View
-          style={[styles.tag, { left, width: tagWidth, borderColor: edge, backgroundColor: colors.paper }]}
+          style={[
+            styles.tag,
+            { left, width: tagWidth, borderColor: edge, backgroundColor: colors.paper },
+            typing !== null && focusRing(colors.ink),
+          ]}
           pointerEvents="box-none"
         >
           <TextInput

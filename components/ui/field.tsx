@@ -2,6 +2,7 @@ import { useId, useState } from 'react';
 import { StyleSheet, TextInput, View, type KeyboardTypeOptions, type TextInputProps } from 'react-native';
 import { RADIUS, space, type as variants } from '../theme/tokens';
 import { useTheme } from '../theme/use-theme';
+import { Button } from './button';
 import { focusRing } from './focus-ring';
 import { Text } from './text';
 
@@ -40,6 +41,7 @@ export function Field(props: Props) {
   } = props;
   const { colors } = useTheme();
   const [focused, setFocused] = useState(false);
+  const [shown, setShown] = useState(false);
   const id = useId();
   return (
     <View style={styles.field}>
@@ -64,7 +66,7 @@ export function Field(props: Props) {
             onBlur?.();
           }}
           onSubmitEditing={onSubmit}
-          secureTextEntry={secret}
+          secureTextEntry={secret && !shown}
           multiline={multiline}
           keyboardType={keyboard}
           autoComplete={autoComplete}
@@ -74,10 +76,11 @@ export function Field(props: Props) {
           style={[variants.field, styles.input, multiline && styles.tall, { color: colors.ink }]}
         />
         {unit ? (
-          <Text variant="quantity" color="ink2">
+          <Text variant="quantity" color="ink2" style={styles.unit}>
             {unit}
           </Text>
         ) : null}
+        {secret ? <Button kind="quiet" label={shown ? 'Hide' : 'Show'} onPress={() => setShown(!shown)} /> : null}
       </View>
       {error ? (
         <Text variant="note" color="apricot" role="alert">
@@ -100,8 +103,8 @@ const styles = StyleSheet.create({
     borderRadius: RADIUS,
     flexDirection: 'row',
     alignItems: 'center',
-    paddingRight: space.m,
   },
+  unit: { paddingRight: space.m },
   input: { flex: 1, minWidth: 0, minHeight: 46, paddingHorizontal: space.m, outlineWidth: 0 },
   tall: { minHeight: 72, paddingTop: space.m },
 });

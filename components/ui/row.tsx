@@ -1,8 +1,8 @@
-import { useState, type ReactNode } from 'react';
+import type { ReactNode } from 'react';
 import { Pressable, StyleSheet, View } from 'react-native';
 import { space } from '../theme/tokens';
+import { useBreakpoint } from '../theme/use-breakpoint';
 import { useTheme } from '../theme/use-theme';
-import { focusRing } from './focus-ring';
 import { Text } from './text';
 
 interface Props {
@@ -15,12 +15,21 @@ interface Props {
   lead?: ReactNode;
   onPress?: () => void;
   label?: string;
+  /** on a phone what stands at the right goes below the words */
+  stacks?: boolean;
 }
 
 /** One line of a list between hairlines. */
-export function Row({ title, note, value, state, lead, onPress, label }: Props) {
+export function Row({ title, note, value, state, lead, onPress, label, stacks = false }: Props) {
   const { colors } = useTheme();
-  const [focused, setFocused] = useState(false);
+  const { phone } = useBreakpoint();
+  const below = stacks && phone;
+  const right = (
+    <>
+      {value ? <Text variant="quantity">{value}</Text> : null}
+      {state}
+    </>
+  );
   const content = (
     <>
       {lead}
@@ -33,22 +42,15 @@ export function Row({ title, note, value, state, lead, onPress, label }: Props) 
             {note}
           </Text>
         ) : null}
+        {below ? <View style={styles.below}>{right}</View> : null}
       </View>
-      {value ? <Text variant="quantity">{value}</Text> : null}
-      {state}
+      {below ? null : right}
     </>
   );
   const style = [styles.row, { borderBottomColor: colors.hair }];
   if (!onPress) return <View style={style}>{content}</View>;
   return (
-    <Pressable
-      role="link"
-      aria-label={label ?? title}
-      onPress={onPress}
-      onFocus={() => setFocused(true)}
-      onBlur={() => setFocused(false)}
-      style={[style, focused && focusRing(colors.ink)]}
-    >
+    <Pressable role="link" aria-label={label ?? title} onPress={onPress} style={style}>
       {content}
     </Pressable>
   );
@@ -64,4 +66,5 @@ const styles = StyleSheet.create({
     borderBottomWidth: 1,
   },
   words: { flex: 1, minWidth: 0 },
+  below: { flexDirection: 'row', alignItems: 'center', justifyContent: 'space-between', marginTop: space.xs },
 });

@@ -1,10 +1,12 @@
-import type { ReactNode } from 'react';
+import { useEffect, useState, type ReactNode } from 'react';
 import { StyleSheet, View } from 'react-native';
 import { CAUTION } from '../../shared/words';
 import { space } from '../theme/tokens';
 import { useTheme } from '../theme/use-theme';
 import { Button } from './button';
 import { Text } from './text';
+
+const NOTICED_MS = 300;
 
 /** What will come here and how to bring it. */
 export function Empty({ title, children, action }: { title: string; children: ReactNode; action?: ReactNode }) {
@@ -34,7 +36,14 @@ export function Fault({ title, children, onRetry }: { title: string; children: R
   );
 }
 
+/** A list on its way; said only when it takes long enough to be noticed. */
 export function Loading({ children }: { children: ReactNode }) {
+  const [late, setLate] = useState(false);
+  useEffect(() => {
+    const timer = setTimeout(() => setLate(true), NOTICED_MS);
+    return () => clearTimeout(timer);
+  }, []);
+  if (!late) return null;
   return (
     <View style={styles.state} aria-busy role="status">
       <Text color="ink2">{children}</Text>

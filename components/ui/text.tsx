@@ -4,7 +4,10 @@ import type { Palette } from '../theme/palette';
 import { type as variants, type TextVariant } from '../theme/tokens';
 import { useTheme } from '../theme/use-theme';
 
-interface Props extends Pick<TextProps, 'numberOfLines' | 'nativeID' | 'role' | 'aria-live' | 'selectable'> {
+interface Props extends Pick<
+  TextProps,
+  'numberOfLines' | 'nativeID' | 'role' | 'aria-live' | 'aria-hidden' | 'selectable'
+> {
   variant?: TextVariant;
   color?: keyof Palette;
   level?: 1 | 2 | 3;
