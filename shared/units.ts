@@ -72,5 +72,9 @@ export function timeCode(frame: number, framesPerSecond: number): string {
   return `${two(Math.floor(seconds / 3600))}:${two(Math.floor(seconds / 60) % 60)}:${two(seconds % 60)}:${two(frame % rate)}`;
 }
 
+/** HH:MM of a moment, where the reader is. */
+export const clockText = (moment: Date): string =>
+  moment.toLocaleTimeString('en-GB', { hour: '2-digit', minute: '2-digit' });
+
 export const dateText = (iso: string): string =>
   new Date(iso).toLocaleString('en-GB', { day: 'numeric', month: 'short', hour: '2-digit', minute: '2-digit' });

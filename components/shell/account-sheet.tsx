@@ -1,4 +1,5 @@
 import { StyleSheet, View } from 'react-native';
+import { ROLE_WORDS } from '../../shared/words';
 import { useSession } from '../api/session';
 import { space } from '../theme/tokens';
 import { useTheme } from '../theme/use-theme';
@@ -13,6 +14,7 @@ export function AccountSheet({ onClose }: { onClose: () => void }) {
   const theme = useTheme();
   return (
     <Sheet title={me?.name ?? 'Account'} onClose={onClose}>
+      <Text color="ink2">{`${me?.email ?? ''}${production ? `, ${ROLE_WORDS[production.role]}` : ''}`}</Text>
       <View style={styles.group}>
         <Text variant="strong">Production</Text>
         {me?.memberships.map(({ production: each }) => (

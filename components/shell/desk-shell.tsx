@@ -9,6 +9,8 @@ import { useTheme } from '../theme/use-theme';
 import { Text } from '../ui/text';
 import { Wordmark } from '../ui/wordmark';
 import { AccountSheet } from './account-sheet';
+import { Crumbs } from './crumbs';
+import { OfflineLine } from './offline-line';
 
 const PLACES: { label: string; href: Href; at: string }[] = [
   { label: 'Today', href: '/today', at: '/today' },
@@ -48,9 +50,7 @@ export function DeskShell({ children }: { children: ReactNode }) {
           </Pressable>
           {wide ? (
             <>
-              <Text variant="dense" color="ink2" numberOfLines={1} style={styles.production}>
-                {production?.name ?? ''}
-              </Text>
+              <Crumbs path={path} />
               <Places path={path} />
             </>
           ) : (
@@ -62,12 +62,19 @@ export function DeskShell({ children }: { children: ReactNode }) {
             onPress={() => setOpen(true)}
             style={[styles.account, wide && { borderLeftWidth: 1, borderLeftColor: colors.hair }]}
           >
-            <Text variant="note" color="ink2" numberOfLines={1}>
-              {wide ? account : me.name}
-            </Text>
+            {wide ? (
+              <Text variant="note" color="ink2" numberOfLines={1}>
+                {account}
+              </Text>
+            ) : (
+              <Text variant="button" color="kelp" numberOfLines={1} style={styles.underlined}>
+                {production?.name ?? me.name}
+              </Text>
+            )}
           </Pressable>
         </View>
       )}
+      <OfflineLine />
       <View role="main" style={styles.fill}>
         {production ? children : <NoProduction />}
       </View>
@@ -107,8 +114,8 @@ function Places({ path }: { path: string }) {
             style={[
               styles.place,
               wide
-                ? { borderBottomColor: here ? colors.kelp : 'transparent', borderBottomWidth: 3 }
-                : { borderTopColor: here ? colors.kelp : 'transparent', borderTopWidth: 3 },
+                ? { borderBottomColor: here ? colors.kelp : 'transparent' }
+                : { borderTopColor: here ? colors.kelp : 'transparent' },
             ]}
           >
             <Text variant={here ? 'button' : 'body'} color={here ? 'ink' : 'ink2'} numberOfLines={1}>
@@ -126,7 +133,6 @@ const styles = StyleSheet.create({
   waiting: { alignItems: 'center', justifyContent: 'center', gap: space.l },
   top: { flexDirection: 'row', alignItems: 'center', borderBottomWidth: 1, paddingLeft: 20 },
   mark: { minHeight: TARGET, justifyContent: 'center', marginRight: space.xl },
-  production: { flex: 1 },
   fill: { flex: 1, minHeight: 0 },
   account: { minHeight: TARGET, justifyContent: 'center', paddingHorizontal: space.l, maxWidth: 260 },
   places: { flexDirection: 'row', alignSelf: 'stretch' },
@@ -137,6 +143,10 @@ const styles = StyleSheet.create({
     justifyContent: 'center',
     alignItems: 'center',
     paddingHorizontal: space.m,
+    borderTopWidth: 3,
+    borderBottomWidth: 3,
+    borderColor: 'transparent',
   },
+  underlined: { textDecorationLine: 'underline' },
   bottom: { height: 60, borderTopWidth: 1, flexDirection: 'row' },
 });
