@@ -19,17 +19,18 @@ import { Button } from '../ui/button';
 import { Card } from '../ui/card';
 import { PhoneHead } from '../ui/phone-head';
 import { QueryState } from '../ui/query-state';
+import { Fact } from '../ui/fact';
 import { Row } from '../ui/row';
 import { Text } from '../ui/text';
 import { TitleBlock } from '../ui/title-block';
-import { sizeOf, sizeText } from './size-text';
+import { sizeOf, sizeText } from '../../shared/model-size';
 
 /** One model: the body as it arrived, its size, what was read and what was not. */
 export function ModelScreen({ modelId }: { modelId: string }) {
   const model = useQuery(queries.model(modelId));
   const patches = useQuery(queries.patches(modelId));
   return (
-    <QueryState query={model} loading="Fetching the model …">
+    <QueryState query={model} loading="Fetching the model …" alone>
       {(data) => <ModelPage model={data} patches={patches.data ?? null} fault={patches.error?.message ?? null} />}
     </QueryState>
   );
@@ -151,9 +152,10 @@ function ModelPage({ model, patches, fault }: { model: Model; patches: Patch[] |
         </View>
       )}
       <Card title="What was read" summary={`${report.imported} of ${report.declared} surfaces`}>
-        <Row title="Imported" value={String(report.imported)} />
-        <Row
-          title="Skipped"
+        <Fact name="Surfaces declared" value={String(report.declared)} />
+        <Fact name="Imported" value={String(report.imported)} />
+        <Fact
+          name="Skipped"
           value={String(skipped)}
           note={
             report.skipped.map((s) => `${s.count} × ${s.entity}: ${s.reason}`).join('; ') || 'Nothing was left out.'
@@ -165,10 +167,10 @@ function ModelPage({ model, patches, fault }: { model: Model; patches: Patch[] |
           </Text>
         ))}
         {model.unitConfirmed ? (
-          <Row
-            title="Size"
+          <Fact
+            name="Size"
             value={sizeText(model)}
-            state={
+            action={
               maySetUp ? (
                 <Button kind="quiet" label="Change unit" onPress={() => change.mutate({ unitConfirmed: false })} />
               ) : null
@@ -184,9 +186,9 @@ function ModelPage({ model, patches, fault }: { model: Model; patches: Patch[] |
             : `${report.edges.open} open, ${report.edges.gapped} with a gap`
         }
       >
-        <Row title="Joined" value={String(report.edges.joined)} />
-        <Row
-          title="With a gap"
+        <Fact name="Joined" value={String(report.edges.joined)} />
+        <Fact
+          name="With a gap"
           value={String(report.edges.gapped)}
           note={
             report.edges.gapped > 0
@@ -194,12 +196,12 @@ function ModelPage({ model, patches, fault }: { model: Model; patches: Patch[] |
               : undefined
           }
         />
-        <Row
-          title="Open"
+        <Fact
+          name="Open"
           value={String(report.edges.open)}
           note={report.edges.open > 0 ? 'An open rim is closed for the inside test only.' : undefined}
         />
-        <Row title="Pinched to a point" value={String(report.edges.degenerate)} />
+        <Fact name="Pinched to a point" value={String(report.edges.degenerate)} />
       </Card>
       <Card title="Patch list" summary={`${model.patchCount}`}>
         {(patches ?? []).slice(0, 400).map((patch, k) => (

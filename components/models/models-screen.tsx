@@ -13,7 +13,7 @@ import { QueryState } from '../ui/query-state';
 import { Row } from '../ui/row';
 import { Empty, Fault } from '../ui/states';
 import { chooseFile, useFileDrop } from './choose-file';
-import { sizeText } from './size-text';
+import { sizeText } from '../../shared/model-size';
 
 /** Models of the production, and the way to bring one in. */
 export function ModelsScreen() {
@@ -89,6 +89,7 @@ export function ModelsScreen() {
                   title={model.name}
                   note={`${model.fileName}, ${model.patchCount} patches, by ${model.createdBy.name}, ${dateText(model.createdAt)}`}
                   value={sizeText(model)}
+                  stacks
                   onPress={() => router.push(`/models/${model.id}`)}
                 />
               ))}

@@ -1,5 +1,5 @@
-import { figures, lengthUnitFor, toLength } from '../../shared/units';
-import type { Model } from '../../shared/wire/models';
+import { figures, lengthUnitFor, toLength } from './units';
+import type { Model } from './wire/models';
 
 /** Edge lengths of a model's box in metres, x y z. */
 export const sizeOf = (model: Pick<Model, 'bounds' | 'unit'>): [number, number, number] =>
