@@ -11,6 +11,7 @@ import { useTheme } from '../theme/use-theme';
 import { Button } from '../ui/button';
 import { Field } from '../ui/field';
 import { Text } from '../ui/text';
+import { TitleBlock } from '../ui/title-block';
 import { Wordmark } from '../ui/wordmark';
 import { PuddingDrawing } from './pudding-drawing';
 
@@ -23,7 +24,7 @@ const schema = Yup.object({
 export function SignInScreen() {
   const { me, signIn } = useSession();
   const { colors } = useTheme();
-  const { wide } = useBreakpoint();
+  const { wide, width } = useBreakpoint();
   const [refused, setRefused] = useState<string | null>(null);
   const form = useFormik({
     initialValues: { email: '', password: '' },
@@ -44,20 +45,22 @@ export function SignInScreen() {
   const fault = (field: 'email' | 'password') => (form.touched[field] ? (form.errors[field] ?? null) : null);
   return (
     <ScrollView style={{ backgroundColor: colors.page }} contentContainerStyle={[styles.page, wide && styles.wide]}>
-      <View style={[styles.drawing, wide && styles.half]}>
-        <Wordmark width={wide ? 168 : 120} />
-        <Text variant={wide ? 'title' : 'titlePhone'} level={1}>
-          See how it moves, the day the model arrives.
-        </Text>
-        <Text color="ink2" style={styles.lead}>
-          Bring a curved-surface model as it is. Give it rubber, foam or flesh, hold it, push it, and keep the run you
-          agree on.
-        </Text>
-        <PuddingDrawing width={wide ? 520 : 320} />
+      <View style={[wide ? styles.stage : styles.top, { backgroundColor: colors.stage, borderColor: colors.hair }]}>
+        <PuddingDrawing width={wide ? Math.min(920, 0.92 * (width - FORM)) : Math.min(420, width)} />
+        {wide ? (
+          <TitleBlock
+            cells={[
+              { label: 'Drawing', value: 'Steamed pudding, at rest' },
+              { label: 'Unit', value: 'mm', mono: true },
+            ]}
+            phone={[]}
+          />
+        ) : null}
       </View>
-      <View style={[styles.form, wide && { ...styles.side, borderLeftColor: colors.hair }]}>
-        <Text variant="section" level={2}>
-          Sign in
+      <View style={wide ? styles.side : styles.form}>
+        <Wordmark width={wide ? 178 : 112} />
+        <Text color="ink2" level={1} style={styles.lead}>
+          How the new model will move, the day it arrives.
         </Text>
         <View style={styles.fields}>
           <Field
@@ -88,20 +91,22 @@ export function SignInScreen() {
         ) : null}
         <Button kind="primary" label="Sign in" working={form.isSubmitting && 'Signing in …'} onPress={submit} />
         <Text variant="note" color="ink2">
-          No account? An administrator of your studio makes one.
+          No account yet? Your studio’s administrator makes one. Nobody can sign up alone.
         </Text>
       </View>
     </ScrollView>
   );
 }
 
+const FORM = 480;
+
 const styles = StyleSheet.create({
-  page: { minHeight: '100%', padding: space.l, gap: space.xl, justifyContent: 'center' },
-  wide: { flexDirection: 'row', padding: 0, gap: 0, justifyContent: 'space-between' },
-  drawing: { gap: space.m },
-  half: { flex: 1, padding: space.huge, justifyContent: 'center', gap: space.l },
-  lead: { maxWidth: 460 },
-  form: { gap: space.l, width: '100%', maxWidth: 420 },
-  side: { width: 420, padding: space.huge, justifyContent: 'center', borderLeftWidth: 1 },
+  page: { minHeight: '100%' },
+  wide: { flexDirection: 'row' },
+  top: { alignItems: 'center', borderBottomWidth: 1 },
+  stage: { flex: 1, alignItems: 'center', justifyContent: 'center', borderRightWidth: 1 },
+  form: { gap: space.l, padding: 20, width: '100%', maxWidth: 460, alignSelf: 'center' },
+  side: { width: FORM, padding: 64, gap: space.l, justifyContent: 'center' },
+  lead: { maxWidth: 260 },
   fields: { gap: space.l },
 });

@@ -4,6 +4,8 @@ export type Scheme = 'day' | 'night';
 export interface StageColours {
   ground: string;
   clay: string;
+  /** plates and stiff cores, cooler */
+  core: string;
   left: string;
   right: string;
   chosen: string;
@@ -22,6 +24,7 @@ export const STAGE_COLOURS: Record<Scheme, StageColours> = {
   day: {
     ground: '#F7F5F0',
     clay: '#DFCFB6',
+    core: '#DEDCD6',
     left: '#B7CFC2',
     right: '#CDB4C6',
     chosen: '#1F6F5C',
@@ -35,6 +38,7 @@ export const STAGE_COLOURS: Record<Scheme, StageColours> = {
   night: {
     ground: '#1A1E24',
     clay: '#9C8E7C',
+    core: '#8E9194',
     left: '#6E9587',
     right: '#94748B',
     chosen: '#5FC2A5',
