@@ -167,6 +167,9 @@ export function CloseUp({
       onResponderMove={(event) => from && onFrame(Math.round(from.frame - (event.nativeEvent.pageX - from.x) / step))}
       onResponderRelease={() => setFrom(null)}
     >
+      <Text variant="caption" color="ink2">
+        close-up, drag to step
+      </Text>
       {width > 0 ? (
         <Svg width={width} height={44} style={{ pointerEvents: 'none' }}>
           <Line x1={0} x2={width} y1={10} y2={10} stroke={colors.edge} />
@@ -211,5 +214,5 @@ const styles = StyleSheet.create({
   head: { flexDirection: 'row', justifyContent: 'space-between', gap: 12, paddingHorizontal: EDGE },
   readings: { flexDirection: 'row', gap: 12 },
   touch: { height: TRACE + RULE, cursor: 'pointer', userSelect: 'none' },
-  close: { height: 46, marginHorizontal: EDGE, cursor: 'pointer', userSelect: 'none' },
+  close: { height: 62, marginHorizontal: EDGE, cursor: 'pointer', userSelect: 'none' },
 });

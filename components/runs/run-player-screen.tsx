@@ -1,19 +1,20 @@
 import { router } from 'expo-router';
 import { useEffect } from 'react';
-import { StyleSheet, View } from 'react-native';
-import { lengthUnitFor, timeCode } from '../../shared/units';
+import { ScrollView, StyleSheet, View } from 'react-native';
+import { dateText, lengthUnitFor, timeCode } from '../../shared/units';
 import { StageView } from '../stage/stage-view';
 import { useBreakpoint } from '../theme/use-breakpoint';
 import { useTheme } from '../theme/use-theme';
 import { Button } from '../ui/button';
+import { Alone } from '../ui/alone';
 import { Card } from '../ui/card';
+import { Fact } from '../ui/fact';
 import { PhoneHead } from '../ui/phone-head';
-import { Row } from '../ui/row';
 import { Caution, Fault, Loading } from '../ui/states';
 import { Text } from '../ui/text';
 import { TitleBlock } from '../ui/title-block';
 import { CloseUp, FrameRule } from './frame-rule';
-import { gaugeDistance, gaugeTitle } from './gauge-series';
+import { furthest, gaugeDistance, gaugeTitle, worstCompression } from './gauge-series';
 import { PlayControls } from './play-controls';
 import { useClock } from './use-clock';
 import { useRun, type OpenRun } from './use-run';
@@ -21,8 +22,17 @@ import { useRun, type OpenRun } from './use-run';
 /** A run to scrub: made for a thumb, good on a desk. */
 export function RunPlayerScreen({ runId }: { runId: string }) {
   const open = useRun(runId);
-  if (open.fault && !open.run) return <Fault title="This run could not be opened.">{open.fault}</Fault>;
-  if (!open.run) return <Loading>Fetching the run …</Loading>;
+  if (!open.run) {
+    return (
+      <Alone>
+        {open.fault ? (
+          <Fault title="This run could not be opened.">{open.fault}</Fault>
+        ) : (
+          <Loading>Fetching the run …</Loading>
+        )}
+      </Alone>
+    );
+  }
   return <Player open={open} />;
 }
 
@@ -65,7 +75,7 @@ function Player({ open }: { open: OpenRun }) {
       <TitleBlock
         cells={[
           { label: 'Model', value: run.model.name, wide: true },
-          { label: 'Scene', value: run.scene.name },
+          { label: 'Scene', value: run.scene.name, wide: true },
           { label: 'Revision', value: String(run.revision.number), mono: true },
           { label: 'Run', value: String(run.number), mono: true },
           { label: 'Frame', value: `${clock.frame} of ${run.frames}`, mono: true },
@@ -88,11 +98,20 @@ function Player({ open }: { open: OpenRun }) {
       onFrame={clock.scrub}
     />
   );
-  const beside = <Button label="Set beside another run" onPress={() => router.push('/runs')} />;
+  const beside = (
+    <Button
+      label={wide ? 'Set beside another run' : 'Set beside'}
+      kind={wide ? 'plain' : 'quiet'}
+      hint="Choose the other run on the page of runs"
+      onPress={() => router.push({ pathname: '/runs', params: { left: run.id } })}
+    />
+  );
   if (!wide) {
     return (
       <View style={styles.fill}>
-        <PhoneHead title={title} back="/runs" />
+        <PhoneHead title={title} back="/runs">
+          {run.status === 'complete' ? beside : null}
+        </PhoneHead>
         <View style={styles.fill}>{stage}</View>
         <View style={[styles.thumb, { borderTopColor: colors.hair }]}>
           {rule}
@@ -115,24 +134,33 @@ function Player({ open }: { open: OpenRun }) {
           </View>
         </View>
       </View>
-      <View style={[styles.column, { borderLeftColor: colors.hair }]}>
+      <ScrollView style={[styles.column, { borderLeftColor: colors.hair }]}>
         <Card title={title} summary={`revision ${run.revision.number}`} folds={false}>
-          <Row title="Made by" value={run.createdBy.name} />
-          <Row title="Part count" value={String(run.provenance.partCount)} />
-          <Row title="Material" note={run.provenance.materials.map((m) => m.name).join(', ')} />
-          <Row title="Frames" value={`${run.frames} at ${run.framesPerSecond} /s`} />
-          <Row title="Solver" value={`${run.provenance.solverVersion}, ${run.provenance.kernels}`} />
-          {traces ? (
-            <Row title="Gauge, furthest" value={`${Math.max(0, ...gaugeDistance(traces)).toFixed(1)} mm`} />
+          <Fact name="Baked by" words={`${run.createdBy.name}, ${dateText(run.completedAt ?? run.createdAt)}`} />
+          <Fact
+            name={run.provenance.materials.length > 1 ? 'Materials' : 'Material'}
+            words={run.provenance.materials.map((m) => m.name).join(', ')}
+          />
+          <Fact name="Part count" value={String(run.provenance.partCount)} />
+          <Fact name="Frames" value={`${run.frames} at ${run.framesPerSecond} f/s`} />
+          <Fact name="Solver" words={`version ${run.provenance.solverVersion}, ${run.provenance.kernels}`} />
+          {traces?.gauges[0] ? (
+            <Fact name={`${traces.gauges[0].id} furthest`} value={`${furthest(traces).toFixed(1)} mm`} />
           ) : null}
-          {traces ? <Row title="Worst compression" value={Math.min(1, ...traces.worstCompression).toFixed(2)} /> : null}
-          {beside}
+          {traces ? (
+            <Fact
+              name="Worst compression"
+              value={worstCompression(traces).toFixed(2)}
+              note="1 is the volume at rest."
+            />
+          ) : null}
+          {run.status === 'complete' ? <View style={styles.beside}>{beside}</View> : null}
           <Caution />
           <Text variant="note" color="ink2">
             Space plays, arrows step, Shift and arrows step ten, Home and End go to the ends.
           </Text>
         </Card>
-      </View>
+      </ScrollView>
     </View>
   );
 }
@@ -140,7 +168,8 @@ function Player({ open }: { open: OpenRun }) {
 const styles = StyleSheet.create({
   fill: { flex: 1, minHeight: 0, minWidth: 0 },
   split: { flex: 1, flexDirection: 'row' },
-  column: { width: 340, borderLeftWidth: 1 },
+  column: { width: 340, flexGrow: 0, borderLeftWidth: 1 },
+  beside: { marginTop: 8 },
   corner: { position: 'absolute', left: 12, top: 10 },
   thumb: { borderTopWidth: 1, paddingVertical: 8, gap: 4 },
   pad: { paddingHorizontal: 16 },

@@ -17,17 +17,17 @@ import { Text } from '../ui/text';
 const STATE_WORDS: Record<Run['status'], string> = { baking: 'baking', complete: '', stopped: 'stopped' };
 
 /** Runs of the production: open one, or set two side by side. */
-export function RunsScreen() {
+export function RunsScreen({ chosen }: { chosen?: string }) {
   const { production } = useSession();
   const runs = useQuery({ ...queries.runs(production!.id), refetchInterval: 10_000 });
-  const [picked, setPicked] = useState<string[]>([]);
+  const [picked, setPicked] = useState<string[]>(chosen ? [chosen] : []);
   const pick = (id: string) =>
     setPicked((now) => (now.includes(id) ? now.filter((each) => each !== id) : [...now, id].slice(-2)));
   const action = (
     <Button
       kind="primary"
       label="Side by side"
-      disabledReason={picked.length === 2 ? null : 'Choose two runs.'}
+      disabledReason={['Choose two runs.', 'Choose one more.', null][picked.length]}
       onPress={() => router.push({ pathname: '/runs/side-by-side', params: { left: picked[0]!, right: picked[1]! } })}
     />
   );
@@ -44,7 +44,8 @@ export function RunsScreen() {
                   key={run.id}
                   title={`Run ${run.number}, ${run.scene.name}`}
                   note={`${run.model.name}, revision ${run.revision.number}, ${run.provenance.partCount} parts, by ${run.createdBy.name}, ${dateText(run.createdAt)}`}
-                  value={`${run.frames} f`}
+                  value={`${run.frames} frames`}
+                  stacks
                   state={
                     <View style={styles.state}>
                       {run.status === 'complete' ? (

@@ -1,6 +1,6 @@
 import { useCallback, useEffect, useRef, useState } from 'react';
 
-export type Pace = 0.25 | 0.5 | 1;
+export type Pace = 0.25 | 0.5 | 1 | 2;
 
 /** The clock of a player: a frame number that runs, steps and is scrubbed. Loops at the end. */
 export function useClock(frames: number, framesPerSecond: number) {

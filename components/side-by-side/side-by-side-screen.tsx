@@ -1,4 +1,5 @@
-import { useEffect, useMemo, useState } from 'react';
+import { router } from 'expo-router';
+import { useEffect, useState } from 'react';
 import { ScrollView, StyleSheet, View } from 'react-native';
 import { lengthUnitFor } from '../../shared/units';
 import { FrameRule } from '../runs/frame-rule';
@@ -10,14 +11,27 @@ import { OrbitCamera } from '../stage/orbit';
 import { StageView } from '../stage/stage-view';
 import { useBreakpoint } from '../theme/use-breakpoint';
 import { useTheme } from '../theme/use-theme';
+import { Button } from '../ui/button';
+import { Alone } from '../ui/alone';
 import { PhoneHead } from '../ui/phone-head';
-import { Caution, Empty, Fault, Loading } from '../ui/states';
+import { Empty, Fault, Loading } from '../ui/states';
 import { Text } from '../ui/text';
-import { whatDiffers } from './what-differs';
+import { Differences } from './differences';
 
 /** Two runs on one clock and one camera, and what differs between them. */
 export function SideBySideScreen({ left, right }: { left?: string; right?: string }) {
-  if (!left || !right) return <Empty title="Two runs are needed.">Choose two on the page of runs.</Empty>;
+  if (!left || !right) {
+    return (
+      <Alone>
+        <Empty
+          title="Two runs are needed."
+          action={<Button label="Choose two" onPress={() => router.replace('/runs')} />}
+        >
+          Choose them on the page of runs.
+        </Empty>
+      </Alone>
+    );
+  }
   return <Pair left={left} right={right} />;
 }
 
@@ -25,8 +39,17 @@ function Pair({ left, right }: { left: string; right: string }) {
   const a = useRun(left);
   const b = useRun(right);
   const fault = [a, b].find((open) => open.fault && !open.run)?.fault;
-  if (fault) return <Fault title="These runs could not be opened.">{fault}</Fault>;
-  if (!a.run || !b.run) return <Loading>Fetching the runs …</Loading>;
+  if (!a.run || !b.run) {
+    return (
+      <Alone>
+        {fault ? (
+          <Fault title="These runs could not be opened.">{fault}</Fault>
+        ) : (
+          <Loading>Fetching the runs …</Loading>
+        )}
+      </Alone>
+    );
+  }
   return <SideBySide a={a} b={b} />;
 }
 
@@ -124,72 +147,13 @@ function Half({
           <View style={[styles.bar, { backgroundColor: side === 'left' ? colors.kelp : colors.plum }]} />
           <Text variant="strong">{`Run ${run.number}`}</Text>
           <Text variant="note" color={open.fault ? 'apricot' : 'ink2'}>
-            {open.fault ?? `${side}, by ${run.createdBy.name}`}
+            {open.fault ?? `${side === 'left' ? 'solid line' : 'dashed line'}, ${run.createdBy.name}`}
           </Text>
         </View>
       </StageView>
     </View>
   );
 }
-
-function Differences({ a, b, most }: { a: OpenRun; b: OpenRun; most?: number }) {
-  const { colors } = useTheme();
-  const found = useMemo(
-    () => (a.document && b.document ? whatDiffers(a.document, b.document) : null),
-    [a.document, b.document],
-  );
-  if (!found) return <Loading>Comparing the set-ups …</Loading>;
-  const measured = [
-    { name: 'Gauge, furthest', left: furthest(a), right: furthest(b) },
-    { name: 'Worst compression', left: worst(a), right: worst(b) },
-  ];
-  const shown = most ? found.differences.slice(0, most) : found.differences;
-  const line = (row: { name: string; left: string; right: string }) => (
-    <View key={row.name} style={[styles.line, { borderBottomColor: colors.hair }]}>
-      <Text variant="dense" style={styles.cellName}>
-        {row.name}
-      </Text>
-      <Text variant="quantity" style={styles.cell}>
-        {row.left}
-      </Text>
-      <Text variant="quantity" style={styles.cell}>
-        {row.right}
-      </Text>
-    </View>
-  );
-  return (
-    <View style={styles.table}>
-      <View style={styles.tableHead}>
-        <Text variant="section" level={2}>
-          What differs
-        </Text>
-        <Text variant="note" color="ink2">{`${found.differences.length} of ${found.settings} settings`}</Text>
-      </View>
-      <View style={[styles.line, { borderBottomColor: colors.ink }]}>
-        <Text variant="note" style={styles.cellName}>
-          {' '}
-        </Text>
-        <Text variant="strong" color="kelp" style={styles.cell}>{`run ${a.run!.number}, solid`}</Text>
-        <Text variant="strong" color="plum" style={styles.cell}>{`run ${b.run!.number}, dashed`}</Text>
-      </View>
-      {shown.length === 0 ? <Text color="ink2">Nothing in the set-up differs.</Text> : shown.map(line)}
-      {shown.length < found.differences.length ? (
-        <Text
-          variant="note"
-          color="ink2"
-        >{`and ${found.differences.length - shown.length} more on a wide window`}</Text>
-      ) : null}
-      <Text variant="note" color="ink2" style={styles.measured}>
-        Measured
-      </Text>
-      {measured.map(line)}
-      <Caution />
-    </View>
-  );
-}
-
-const furthest = ({ traces }: OpenRun) => (traces ? `${Math.max(0, ...gaugeDistance(traces)).toFixed(1)} mm` : '…');
-const worst = ({ traces }: OpenRun) => (traces ? Math.min(1, ...traces.worstCompression).toFixed(2) : '…');
 
 const styles = StyleSheet.create({
   fill: { flex: 1, minHeight: 0, minWidth: 0 },
@@ -204,10 +168,4 @@ const styles = StyleSheet.create({
   phoneTable: { maxHeight: '26%' },
   name: { position: 'absolute', left: 12, top: 8, flexDirection: 'row', alignItems: 'center', gap: 8 },
   bar: { width: 4, height: 24 },
-  table: { padding: 20, gap: 2 },
-  tableHead: { flexDirection: 'row', justifyContent: 'space-between', alignItems: 'baseline' },
-  line: { flexDirection: 'row', gap: 8, minHeight: 38, alignItems: 'center', borderBottomWidth: 1 },
-  cellName: { flex: 1.2 },
-  cell: { flex: 1, textAlign: 'right' },
-  measured: { marginTop: 14 },
 });

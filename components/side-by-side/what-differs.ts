@@ -1,4 +1,5 @@
 import type { SceneDocument } from '../../shared/scene-document';
+import { LAW_WORDS } from '../../shared/words';
 import { figures, stressText } from '../../shared/units';
 
 export interface Difference {
@@ -7,63 +8,140 @@ export interface Difference {
   right: string;
 }
 
-/** Settings of two scene documents in plain words: those that differ, and how many there are in all. */
+/** Settings of two scene documents in plain words: those that differ, those that are the same. */
 export function whatDiffers(
   left: SceneDocument,
   right: SceneDocument,
-): { differences: Difference[]; settings: number } {
+): { differences: Difference[]; same: Difference[]; settings: number } {
   const a = settingsOf(left);
   const b = settingsOf(right);
-  const names = [...new Set([...a.keys(), ...b.keys()])];
-  const differences = names
-    .map((name) => ({ name, left: a.get(name) ?? '–', right: b.get(name) ?? '–' }))
-    .filter((row) => row.left !== row.right);
-  return { differences, settings: names.length };
+  const rows = [...new Set([...a.keys(), ...b.keys()])].map((name) => ({
+    name,
+    left: a.get(name) ?? 'none',
+    right: b.get(name) ?? 'none',
+  }));
+  return {
+    differences: rows.filter((row) => row.left !== row.right),
+    same: rows.filter((row) => row.left === row.right),
+    settings: rows.length,
+  };
 }
 
-function settingsOf(document: SceneDocument): Map<string, string> {
-  const out = new Map<string, string>();
-  const many = document.materials.length > 1;
-  for (const m of document.materials) {
-    const of = many ? ` of ${m.id}` : '';
+type Settings = Map<string, string>;
+type Region = SceneDocument['supports'][number]['region'];
+
+function settingsOf(document: SceneDocument): Settings {
+  const out: Settings = new Map();
+  materialsOf(document, out);
+  out.set('Part count', String(document.parts.count));
+  out.set('Detail of a part', document.parts.order);
+  out.set('Bond distance', `${mm(document.bondDistance)} mm`);
+  out.set('Unit of the model', `${figures(document.unit * 1000)} mm`);
+  out.set('Up', document.up);
+  supportsOf(document, out);
+  loadsOf(document, out);
+  const [ground] = document.obstacles;
+  out.set('Ground', ground ? `at ${mm(ground.height)} mm` : 'none');
+  if (ground) out.set('Friction of the ground', figures(ground.friction));
+  for (const gauge of document.gauges) out.set(`Gauge ${gauge.id}`, `at ${point(gauge.point)} mm`);
+  timeOf(document, out);
+  return out;
+}
+
+function materialsOf({ materials }: SceneDocument, out: Settings): void {
+  for (const m of materials) {
+    const of = materials.length > 1 ? `, ${m.id}` : '';
     out.set(`Material${of}`, m.name);
-    out.set(`Law${of}`, m.law.replace(/-/g, ' '));
+    out.set(`Law${of}`, LAW_WORDS[m.law]);
     out.set(`Young’s modulus${of}`, stressText(m.youngsModulus));
     out.set(`Poisson’s ratio${of}`, figures(m.poissonsRatio));
     out.set(`Density${of}`, `${figures(m.density)} kg/m³`);
+    if (materials.length > 1) out.set(`Where${of}`, m.patches ? patchWords(m.patches) : 'all other patches');
   }
-  out.set('Part count', String(document.parts.count));
-  out.set('Detail of a part', document.parts.order);
-  out.set('Bond distance', `${figures(document.bondDistance * 1000)} mm`);
-  for (const s of document.supports) {
-    out.set(`Support ${s.id}, where`, words(s.region));
+}
+
+function supportsOf({ supports }: SceneDocument, out: Settings): void {
+  for (const s of supports) {
+    out.set(`Support ${s.id}, where`, regionInFull(s.region));
     out.set(`Support ${s.id}, holds`, s.axes.join(' '));
     out.set(
       `Support ${s.id}, path`,
       s.keys.length === 0
-        ? 'fixed'
-        : s.keys.map((k) => `${k.time} s: ${k.translation.map((x) => figures(x * 1000)).join(' ')} mm`).join('; '),
+        ? 'stands still'
+        : s.keys
+            .map(
+              (k) =>
+                `${figures(k.time)} s: ${point(k.translation)} mm${k.rotationDegrees.some((x) => x !== 0) ? `, ${numbers(k.rotationDegrees)}°` : ''}`,
+            )
+            .join('; '),
     );
   }
-  for (const load of document.loads) {
-    const name = `${load.name} ${load.id}`;
-    if (load.kind === 'gravity') out.set('Gravity', `${load.acceleration.map((x) => figures(x)).join(' ')} m/s²`);
-    else if (load.kind === 'push') out.set(name, `${load.force.map((x) => figures(x)).join(' ')} N`);
-    else if (load.kind === 'wind') out.set(name, `${load.velocity.map((x) => figures(x)).join(' ')} m/s`);
-    else if (load.kind === 'traction') out.set(name, `${load.traction.map((x) => figures(x)).join(' ')} Pa`);
-    else out.set(name, `${figures(load.pressure)} Pa`);
-  }
-  const ground = document.obstacles[0];
-  out.set('Ground', ground ? `at ${figures(ground.height * 1000)} mm, friction ${figures(ground.friction)}` : 'none');
-  const { time } = document;
-  if (time.kind === 'motion') {
-    out.set('Frames per second', figures(time.framesPerSecond, 4));
-    out.set('Frames', String(time.frames));
-    out.set('Substeps', String(time.substeps));
-    out.set('Method', time.method === 'hht' ? 'HHT' : 'backward Euler');
-  }
-  return out;
 }
 
-const words = (region: unknown): string =>
-  JSON.stringify(region).replace(/["{}]/g, '').replace(/,/g, ', ').slice(0, 90);
+function loadsOf({ loads }: SceneDocument, out: Settings): void {
+  for (const load of loads) {
+    const name = load.kind === 'gravity' ? `Gravity ${load.id}` : `${load.name} ${load.id}`;
+    switch (load.kind) {
+      case 'gravity':
+        out.set(name, `${numbers(load.acceleration)} m/s²`);
+        break;
+      case 'push':
+        out.set(name, `${numbers(load.force)} N`);
+        out.set(
+          `${name}, when`,
+          `${figures(load.from)} s to ${load.until === null ? 'the end' : `${figures(load.until)} s`}`,
+        );
+        break;
+      case 'wind':
+        out.set(name, `${numbers(load.velocity)} m/s`);
+        out.set(`${name}, drag`, `${figures(load.dragCoefficient)} at ${figures(load.airDensity)} kg/m³`);
+        break;
+      case 'traction':
+        out.set(name, `${numbers(load.traction)} Pa`);
+        break;
+      case 'pressure':
+        out.set(name, stressText(load.pressure));
+        break;
+    }
+    if ('region' in load) out.set(`${name}, where`, regionInFull(load.region));
+  }
+}
+
+function timeOf({ time }: SceneDocument, out: Settings): void {
+  if (time.kind === 'static') {
+    out.set('Solved as', `rest under load, ${time.loadSteps} steps`);
+    return;
+  }
+  out.set('Solved as', 'motion');
+  out.set('Frames per second', figures(time.framesPerSecond, 4));
+  out.set('Frames', String(time.frames));
+  out.set('Substeps', String(time.substeps));
+  out.set('Method', time.method === 'hht' ? 'HHT' : 'backward Euler');
+}
+
+const mm = (metres: number) => figures(metres * 1000);
+const numbers = (v: readonly number[]) => v.map((x) => figures(x)).join(' ');
+const point = (v: readonly number[]) => v.map(mm).join(' ');
+
+const MOST_PATCHES = 12;
+
+function patchWords(patches: readonly number[]): string {
+  const named = patches.slice(0, MOST_PATCHES).join(' ');
+  const rest = patches.length - MOST_PATCHES;
+  return `patch${patches.length === 1 ? '' : 'es'} ${named}${rest > 0 ? ` and ${rest} more` : ''}`;
+}
+
+function regionInFull(region: Region): string {
+  switch (region.kind) {
+    case 'all':
+      return 'the whole surface';
+    case 'plane':
+      return `within ${mm(region.tolerance)} mm of the plane through ${point(region.point)} mm, normal ${numbers(region.normal)}`;
+    case 'box':
+      return `box ${point(region.min)} to ${point(region.max)} mm`;
+    case 'sphere':
+      return `within ${mm(region.radius)} mm of ${point(region.centre)} mm`;
+    case 'patches':
+      return patchWords(region.patches);
+  }
+}
