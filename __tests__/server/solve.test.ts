@@ -68,6 +68,11 @@ it.each<[string, (scene: Record<string, unknown>) => void, RegExp]>([
     /\/materials\/0\/youngsModulus: Young's modulus must be greater than 0/,
   ],
   [
+    'a negative stiffness',
+    (s) => ((s.materials as { youngsModulus: number }[])[0]!.youngsModulus = -1e5),
+    /\/materials\/0\/youngsModulus: Young's modulus must be greater than 0/,
+  ],
+  [
     'nu = 0.5',
     (s) => ((s.materials as { poissonsRatio: number }[])[0]!.poissonsRatio = 0.5),
     /\/materials\/0\/poissonsRatio: At 0.5 nothing can change volume/,
