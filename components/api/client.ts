@@ -1,5 +1,3 @@
-import { sha256 } from '@noble/hashes/sha2';
-import { bytesToHex } from '@noble/hashes/utils';
 import type { z } from 'zod';
 import { sessionSchema, type Session } from '../../shared/wire/session';
 import { lostConnection, problemFrom, problemOf } from './problem';
@@ -64,6 +62,11 @@ export class ApiClient {
 
   /** Sends bytes with their SHA-256, which the server checks. */
   async putBytes(path: string, bytes: Uint8Array): Promise<void> {
+    // Fetched with the first bytes to send; the browser's own digest is missing where the page came by plain HTTP.
+    const [{ sha256 }, { bytesToHex }] = await Promise.all([
+      import('@noble/hashes/sha2'),
+      import('@noble/hashes/utils'),
+    ]);
     const headers = { 'Content-Type': 'application/octet-stream', 'X-Content-SHA256': bytesToHex(sha256(bytes)) };
     await this.send(path, { method: 'PUT', body: bytes as Uint8Array<ArrayBuffer>, headers });
   }

@@ -1,16 +1,18 @@
 import { useMutation, useQuery, useQueryClient } from '@tanstack/react-query';
 import { router } from 'expo-router';
-import { useMemo, useState } from 'react';
+import { useEffect, useMemo, useState } from 'react';
 import { ScrollView, StyleSheet, View } from 'react-native';
 import { figures, likeWhat, lengthText, lengthUnitFor, MODEL_UNITS } from '../../shared/units';
 import { modelSchema, type Model, type ModelChange } from '../../shared/wire/models';
 import { sceneSchema } from '../../shared/wire/scenes';
-import { displaySurface, scalePatch, type Patch } from '../../solver/index';
+import type { Patch } from '../../solver/index';
 import { api } from '../api/client';
 import { queries } from '../api/queries';
 import { useMay, useSession } from '../api/session';
 import { defaultDocument } from '../../shared/default-document';
+import { bodyName, prepareAhead } from '../solver-client/solver-client';
 import { PoseSource } from '../stage/pose-source';
+import { stageModule } from '../stage/stage-module';
 import { StageView } from '../stage/stage-view';
 import { space } from '../theme/tokens';
 import { useBreakpoint } from '../theme/use-breakpoint';
@@ -44,11 +46,34 @@ function ModelPage({ model, patches, fault }: { model: Model; patches: Patch[] |
   const client = useQueryClient();
   const [pose] = useState(() => new PoseSource());
   const [chosen, setChosen] = useState<ReadonlySet<number>>(new Set());
-  const surface = useMemo(
-    () => (patches ? displaySurface(patches.map((patch) => scalePatch(patch, model.unit))) : null),
-    [patches, model.unit],
-  );
+  const drawn = useQuery({
+    queryKey: ['model-surface', model.id, model.unit],
+    staleTime: Infinity,
+    gcTime: 60_000,
+    enabled: patches !== null,
+    queryFn: async () => {
+      const { displaySurface, scalePatch } = await stageModule();
+      const metric = patches!.map((patch) => scalePatch(patch, model.unit));
+      return { metric, surface: displaySurface(metric) };
+    },
+  });
+  const surface = drawn.data?.surface ?? null;
+  const metric = drawn.data?.metric;
   const presets = useQuery(queries.materials(production!.id));
+  const sceneName = `${model.name}, first look`.slice(0, 120);
+  const items = presets.data?.items;
+  const firstScene = useMemo(
+    () => (items ? defaultDocument(model, sceneName, items) : null),
+    [model, sceneName, items],
+  );
+  // The body is set up while its report is read, so that the first look moves at once.
+  useEffect(
+    () =>
+      maySetUp && metric && firstScene
+        ? prepareAhead({ body: bodyName(firstScene), scene: firstScene, patches: metric })
+        : undefined,
+    [maySetUp, metric, firstScene],
+  );
   const change = useMutation({
     mutationFn: (body: ModelChange) => api.patch(`/api/models/${model.id}`, body, modelSchema),
     onSuccess: (next) => {
@@ -57,17 +82,16 @@ function ModelPage({ model, patches, fault }: { model: Model; patches: Patch[] |
     },
   });
   const setUp = useMutation({
-    mutationFn: () => {
-      const name = `${model.name}, first look`.slice(0, 120);
-      return api.post(
+    mutationFn: () =>
+      api.post(
         `/api/productions/${model.productionId}/scenes`,
-        { name, document: defaultDocument(model, name, presets.data?.items ?? []) },
+        { name: sceneName, document: firstScene ?? defaultDocument(model, sceneName, []) },
         sceneSchema,
-      );
-    },
+      ),
     onSuccess: (scene) => {
       void client.invalidateQueries({ queryKey: ['scenes', model.productionId] });
-      router.push(`/scenes/${scene.id}`);
+      void client.prefetchQuery(queries.revision(scene.latestRevision.id));
+      router.push(`/scenes/${scene.id}?look=first`);
     },
   });
   const { report } = model;
@@ -86,7 +110,9 @@ function ModelPage({ model, patches, fault }: { model: Model; patches: Patch[] |
       onPick={(hit) => setChosen(new Set([hit.patch]))}
     >
       <View style={styles.corner} pointerEvents="none">
-        <Text variant="note">{fault ?? (surface ? 'As it arrived.' : 'Fetching the patches …')}</Text>
+        <Text variant="note">
+          {fault ?? drawn.error?.message ?? (surface ? 'As it arrived.' : 'Fetching the patches …')}
+        </Text>
         {chosen.size > 0 && patches ? (
           <Text variant="note" color="ink2">
             {patches[[...chosen][0]!]?.name}

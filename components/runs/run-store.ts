@@ -1,7 +1,8 @@
 import { inflateSync } from 'fflate';
-import { decodeChunk, scalePatch, surfaceFromRecipe, type Patch, type SurfaceMap } from '../../solver/index';
+import type { Patch, SurfaceMap } from '../../solver/index';
 import type { Run } from '../../shared/wire/runs';
 import type { ApiClient } from '../api/client';
+import { stageModule } from '../stage/stage-module';
 
 const POSES_PER_CHUNK = 24;
 
@@ -22,6 +23,7 @@ export class RunPoses {
       for (const { index } of this.run.chunks) {
         if (this.stopped) return;
         const { bytes } = await this.api.getBytes(`/api/runs/${this.run.id}/chunks/${index}`);
+        const { decodeChunk } = await stageModule();
         const chunk = decodeChunk(inflateSync(bytes));
         chunk.poses.forEach((pose, k) => this.poses.set(index * POSES_PER_CHUNK + k, pose));
         this.tell();
@@ -66,7 +68,10 @@ export async function runSurface(
   patches: readonly Patch[],
   unit: number,
 ): Promise<SurfaceMap> {
-  const { bytes } = await api.getBytes(`/api/runs/${run.id}/recipe`);
+  const [{ scalePatch, surfaceFromRecipe }, { bytes }] = await Promise.all([
+    stageModule(),
+    api.getBytes(`/api/runs/${run.id}/recipe`),
+  ]);
   return surfaceFromRecipe(
     patches.map((patch) => scalePatch(patch, unit)),
     inflateSync(bytes),

@@ -1,8 +1,9 @@
 import { useEffect, useRef, useState } from 'react';
 import type { SceneDocument } from '../../shared/scene-document';
-import { scalePatch, type LiveFrame, type LiveSpeed, type Patch, type Ready } from '../../solver/index';
-import { SolverClient, type SolverEvents } from '../solver-client/solver-client';
+import type { LiveFrame, LiveSpeed, Patch, Ready } from '../../solver/index';
+import { bodyName, SolverClient, type SolverEvents } from '../solver-client/solver-client';
 import { PoseSource } from '../stage/pose-source';
+import { stageModule } from '../stage/stage-module';
 
 /** Samples kept for the traces along the bottom. */
 const TRACE_LENGTH = 400;
@@ -24,6 +25,7 @@ export function useLive(
   patches: Patch[],
   up: 'y' | 'z',
   bakeEvents: React.RefObject<SolverEvents>,
+  moveAtOnce: boolean,
 ) {
   const [pose] = useState(() => new PoseSource());
   const client = useRef<SolverClient | null>(null);
@@ -33,15 +35,16 @@ export function useLive(
   const [message, setMessage] = useState<{ text: string; fault: boolean } | null>(null);
   const [playing, setPlaying] = useState<LiveSpeed | null>(null);
   const traces = useRef<LiveTraces>(structuredClone(EMPTY));
-  const latest = useRef({ document, up });
+  const latest = useRef({ document, up, moveAtOnce });
   const sent = useRef<SceneDocument | null>(null);
 
   useEffect(() => {
-    latest.current = { document, up };
+    latest.current = { document, up, moveAtOnce };
   });
 
   useEffect(() => {
     let drawn = 0;
+    let first = true;
     const show = (next: LiveFrame) => {
       pose.set(next.coefficients);
       const t = traces.current;
@@ -58,11 +61,16 @@ export function useLive(
     };
     const solver = new SolverClient({
       onProgress: (stage) => setProgress(stage),
-      onReady: (next, first, remark) => {
+      onReady: (next, at, remark) => {
         setProgress(null);
         setReady(next);
-        pose.set(first.coefficients);
-        setFrame(first);
+        pose.set(at.coefficients);
+        setFrame(at);
+        if (first && latest.current.moveAtOnce) {
+          setPlaying('real-time');
+          solver.play('real-time');
+        }
+        first = false;
         if (remark) setMessage({ text: remark, fault: false });
       },
       onFrame: show,
@@ -81,14 +89,27 @@ export function useLive(
       onBaked: () => bakeEvents.current.onBaked?.(),
       onBakeStopped: (at) => bakeEvents.current.onBakeStopped?.(at),
     });
-    client.current = solver;
-    const first = latest.current.document;
-    sent.current = first;
-    solver.open(
-      first,
-      patches.map((patch) => scalePatch(patch, first.unit)),
+    let left = false;
+    stageModule().then(
+      ({ scalePatch }) => {
+        if (left) return;
+        // What was changed meanwhile is opened with it.
+        const scene = latest.current.document;
+        client.current = solver;
+        sent.current = scene;
+        solver.open({
+          body: bodyName(scene),
+          scene,
+          patches: patches.map((patch) => scalePatch(patch, scene.unit)),
+        });
+      },
+      () =>
+        setMessage({ text: 'The stage could not be fetched. Load the page again; the scene is kept.', fault: true }),
     );
-    return () => solver.close();
+    return () => {
+      left = true;
+      solver.close();
+    };
   }, [patches, pose, bakeEvents]);
 
   // A changed document reaches the solver at once; a changed part count waits until the slider rests.

@@ -1,13 +1,21 @@
 import { useQuery } from '@tanstack/react-query';
-import { useMemo, useState } from 'react';
+import { router } from 'expo-router';
+import { useEffect, useMemo, useState } from 'react';
 import { Fault } from '../ui/states';
+import { useReducedMotion } from '../theme/use-reduced-motion';
 import { queries } from '../api/queries';
 import { QueryState } from '../ui/query-state';
 import { readDraft } from './draft-store';
 import { Workbench } from './workbench';
 
 /** Opens a scene: its latest revision, or the draft this browser kept, and the patches of its model. */
-export function WorkbenchScreen({ sceneId }: { sceneId: string }) {
+export function WorkbenchScreen({ sceneId, firstLook }: { sceneId: string; firstLook: boolean }) {
+  const calm = useReducedMotion();
+  const [looking] = useState(firstLook);
+  // Coming back to the scene, or loading it again, is no first look.
+  useEffect(() => {
+    if (firstLook) router.setParams({ look: undefined });
+  }, [firstLook]);
   const scene = useQuery({ ...queries.scene(sceneId), staleTime: 0 });
   const revision = useQuery({
     ...queries.revision(scene.data?.latestRevision.id ?? ''),
@@ -40,6 +48,7 @@ export function WorkbenchScreen({ sceneId }: { sceneId: string }) {
             revision={opened.revision}
             patches={opened.patches}
             draft={draft}
+            moveAtOnce={looking && !calm}
           />
         ) : null
       }

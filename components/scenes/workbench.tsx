@@ -40,10 +40,12 @@ interface Props {
   revision: Revision;
   patches: Patch[];
   draft: Draft | null;
+  /** a first look starts moving by itself */
+  moveAtOnce: boolean;
 }
 
 /** The technical director's bench: the body alive, and everything about it in cards. */
-export function Workbench({ scene, revision: opened, patches, draft }: Props) {
+export function Workbench({ scene, revision: opened, patches, draft, moveAtOnce }: Props) {
   const { me } = useSession();
   const { wide } = useBreakpoint();
   const { colors, scheme } = useTheme();
@@ -55,7 +57,7 @@ export function Workbench({ scene, revision: opened, patches, draft }: Props) {
   );
   const changed = document !== revision.document && JSON.stringify(document) !== JSON.stringify(revision.document);
   const bakeEvents = useRef<SolverEvents>({});
-  const live = useLive(document, patches, document.up, bakeEvents);
+  const live = useLive(document, patches, document.up, bakeEvents, moveAtOnce);
   const baking = useBake(scene.id, live.client, bakeEvents);
   const [card, setCard] = useState<(typeof CARDS)[number]>('Material');
   const [show, setShow] = useState<Show>('clay');

@@ -22,18 +22,67 @@ export interface SolverEvents {
   onBakeStopped?: (pose: number) => void;
 }
 
+/** A scene and the body it moves: patches in metres, named by the model and its unit. */
+export interface OpenScene {
+  body: string;
+  scene: Scene;
+  patches: Patch[];
+}
+
+/** Names the patches of a document in metres. */
+export function bodyName({ geometry, unit }: Scene): string {
+  return JSON.stringify([geometry, unit]);
+}
+
+/** A body set up ahead waits this long for its scene after the screen that asked for it was left. */
+const PATIENCE_MILLISECONDS = 20_000;
+
+let ahead: { body: string; worker: Worker } | null = null;
+let leaving: ReturnType<typeof setTimeout> | undefined;
+
+/**
+ * Starts a worker on a body while a person still reads about it; the next SolverClient that opens the same body
+ * takes the worker over. Returns what to call when the screen is left.
+ */
+export function prepareAhead(open: OpenScene): () => void {
+  clearTimeout(leaving);
+  if (ahead?.body !== open.body) {
+    dropAhead();
+    const worker = newWorker();
+    // A fault shows when the scene is opened.
+    worker.onerror = (event) => event.preventDefault();
+    worker.postMessage({ type: 'prepare-ahead', ...open } satisfies Request);
+    ahead = { body: open.body, worker };
+  }
+  return () => {
+    leaving = setTimeout(dropAhead, PATIENCE_MILLISECONDS);
+  };
+}
+
+function dropAhead(): void {
+  ahead?.worker.terminate();
+  ahead = null;
+}
+
+function newWorker(): Worker {
+  return new Worker(new URL('../../solver/worker/solver.worker', import.meta.url));
+}
+
+function takeAhead(body: string): Worker | null {
+  if (ahead?.body !== body) return null;
+  const { worker } = ahead;
+  ahead = null;
+  return worker;
+}
+
 /** One solver in a web worker. When the worker itself breaks, the scene it had is opened again in a new one. */
 export class SolverClient {
-  private worker: Worker;
-  private opened: { scene: Scene; patches: Patch[] } | null = null;
-  private closed = false;
+  private worker: Worker | null = null;
+  private opened: OpenScene | null = null;
 
-  constructor(private readonly events: SolverEvents) {
-    this.worker = this.start();
-  }
+  constructor(private readonly events: SolverEvents) {}
 
-  private start(): Worker {
-    const worker = new Worker(new URL('../../solver/worker/solver.worker', import.meta.url));
+  private start(worker: Worker): Worker {
     worker.onmessage = ({ data }: MessageEvent<Response>) => this.take(data);
     worker.onerror = (event) => {
       event.preventDefault();
@@ -47,9 +96,8 @@ export class SolverClient {
   }
 
   private restart(): void {
-    this.worker.terminate();
-    if (this.closed) return;
-    this.worker = this.start();
+    this.worker?.terminate();
+    this.worker = this.start(newWorker());
     if (this.opened) this.send({ type: 'open', ...this.opened });
   }
 
@@ -78,13 +126,14 @@ export class SolverClient {
   }
 
   private send(request: Request): void {
-    this.worker.postMessage(request);
+    this.worker?.postMessage(request);
   }
 
-  /** Patches in metres. */
-  open(scene: Scene, patches: Patch[]): void {
-    this.opened = { scene, patches };
-    this.send({ type: 'open', scene, patches });
+  open(open: OpenScene): void {
+    this.worker?.terminate();
+    this.worker = this.start(takeAhead(open.body) ?? newWorker());
+    this.opened = open;
+    this.send({ type: 'open', ...open });
   }
 
   setScene(scene: Scene): void {
@@ -121,7 +170,8 @@ export class SolverClient {
   }
 
   close(): void {
-    this.closed = true;
-    this.worker.terminate();
+    this.worker?.terminate();
+    this.worker = null;
+    this.opened = null;
   }
 }

@@ -3,9 +3,10 @@ import { StyleSheet, View } from 'react-native';
 import { useTheme } from '../theme/use-theme';
 import { Button } from '../ui/button';
 import { Text } from '../ui/text';
+import { stageModule } from './stage-module';
 import type { StageViewProps } from './stage-types';
 
-const StageCanvas = lazy(() => import('./stage-canvas'));
+const StageCanvas = lazy(stageModule);
 
 /** The stage: the body in soft light on its ground, with drafting marks. Fills its parent. */
 export function StageView(props: StageViewProps) {

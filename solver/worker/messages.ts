@@ -8,8 +8,10 @@ export type LiveSpeed = 'slow' | 'real-time' | 'flat-out';
 
 /** To the worker. */
 export type Request =
-  /** Patches in metres. */
-  | { type: 'open'; scene: Scene; patches: Patch[] }
+  /** Patches in metres; `body` names them, so that a body prepared ahead is known again. */
+  | { type: 'open'; body: string; scene: Scene; patches: Patch[] }
+  /** Set a body up before its scene is asked for: nothing is answered, a fault is met again when it is opened. */
+  | { type: 'prepare-ahead'; body: string; scene: Scene; patches: Patch[] }
   | { type: 'scene'; scene: Scene }
   | { type: 'play'; speed: LiveSpeed }
   | { type: 'pause' }

@@ -28,6 +28,7 @@ export class SolverSession {
   private lastSent = 0;
   playing: { scale: number } | null = null;
   private bake: Bake | null = null;
+  private ahead: { key: string; prepared: Prepared } | null = null;
 
   constructor(
     private readonly kernels: Kernels,
@@ -46,7 +47,7 @@ export class SolverSession {
     try {
       this.act(request);
     } catch (error) {
-      this.fail(error, during);
+      if (request.type !== 'prepare-ahead') this.fail(error, during);
     }
   }
 
@@ -55,7 +56,10 @@ export class SolverSession {
       case 'open':
         this.playing = null;
         this.patches = request.patches;
-        this.open(request.scene, false);
+        this.open(request.scene, false, aheadKey(request));
+        return;
+      case 'prepare-ahead':
+        this.ahead = { key: aheadKey(request), prepared: prepare(request.scene, request.patches) };
         return;
       case 'scene':
         this.change(request.scene);
@@ -98,9 +102,13 @@ export class SolverSession {
     return this.simulation;
   }
 
-  private open(scene: Scene, keepPose: boolean): void {
+  private open(scene: Scene, keepPose: boolean, key?: string): void {
     const from = keepPose ? { prepared: this.prepared!, simulation: this.simulation! } : null;
-    const prepared = prepare(scene, this.patches, (stage, share) => this.send({ type: 'progress', stage, share }));
+    const prepared =
+      key && this.ahead?.key === key
+        ? this.ahead.prepared
+        : prepare(scene, this.patches, (stage, share) => this.send({ type: 'progress', stage, share }));
+    this.ahead = null;
     const simulation = new Simulation(prepared, scene, this.kernels);
     let remark: string | null = null;
     if (from) {
@@ -257,6 +265,10 @@ function geometryKey(scene: Scene): string {
     scene.bondDistance,
     scene.materials.map((material) => [material.id, material.patches ?? null]),
   ]);
+}
+
+function aheadKey({ body, scene }: { body: string; scene: Scene }): string {
+  return body + geometryKey(scene);
 }
 
 /** A bake in progress: from rest, frame by frame, every step exact so that the same scene gives the same bytes. */

@@ -35,7 +35,7 @@ function open(scene = soft) {
     () => (now += 40),
   );
   if (scene.geometry.kind !== 'shapes') throw new Error('shapes only');
-  session.handle({ type: 'open', scene, patches: scene.geometry.shapes.flatMap(shapePatches) });
+  session.handle({ type: 'open', body: 'beam', scene, patches: scene.geometry.shapes.flatMap(shapePatches) });
   const of = <T extends Response['type']>(type: T) =>
     responses.filter((r): r is Extract<Response, { type: T }> => r.type === type);
   const run = () => {
@@ -106,4 +106,38 @@ it('bakes the same bytes twice, and the same bytes again when it goes on from a 
   const rest = bake({ pose: first[0]!.pose, state: first[0]!.state });
   expect(rest.map((chunk) => chunk.index)).toEqual([1]);
   expect(rest[0]!.bytes).toEqual(first[1]!.bytes);
+});
+
+it('takes over a body that was set up ahead, and sets another one up anew', () => {
+  if (soft.geometry.kind !== 'shapes') throw new Error('shapes only');
+  const patches = soft.geometry.shapes.flatMap(shapePatches);
+  const opened = (body: string, scene: Scene) => {
+    const responses: Response[] = [];
+    const session = new SolverSession(
+      bestKernels(),
+      (response) => responses.push(response),
+      () => 0,
+    );
+    session.handle({ type: 'prepare-ahead', body: 'beam', scene: soft, patches });
+    expect(responses).toEqual([]);
+    session.handle({ type: 'open', body, scene, patches });
+    return responses.map(({ type }) => type);
+  };
+  const stiff = { ...soft, materials: [{ ...soft.materials[0]!, youngsModulus: 9e4 }] };
+  expect(opened('beam', stiff)).toEqual(['ready']);
+  expect(opened('gull', soft)).toContain('progress');
+  expect(opened('beam', { ...soft, parts: { ...soft.parts, count: soft.parts.count + 2 } })).toContain('progress');
+});
+
+it('says at the opening, not before, what is wrong with a body set up ahead', () => {
+  const responses: Response[] = [];
+  const session = new SolverSession(
+    bestKernels(),
+    (response) => responses.push(response),
+    () => 0,
+  );
+  session.handle({ type: 'prepare-ahead', body: 'nothing', scene: soft, patches: [] });
+  expect(responses).toEqual([]);
+  session.handle({ type: 'open', body: 'nothing', scene: soft, patches: [] });
+  expect(responses).toMatchObject([{ type: 'error', during: 'open', message: expect.stringContaining('no patches') }]);
 });
