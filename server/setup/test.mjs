@@ -8,8 +8,10 @@ import { dataFolder, startPostgres } from './postgres.mjs';
 import { findProgram, installDebian, root } from './processes.mjs';
 import { runSetup, say } from './say.mjs';
 
-/** Runs one jest project; resolves to its counts. */
-function runJest(project, env, report) {
+const PROJECTS = ['node', 'web', 'e2e'];
+
+/** Runs one jest project, or its tests whose path matches; resolves to its counts. */
+function runJest(project, paths, env, report) {
   const args = [
     'jest',
     '--selectProjects',
@@ -17,6 +19,7 @@ function runJest(project, env, report) {
     '--json',
     `--outputFile=${report}`,
     '--testLocationInResults=false',
+    ...paths.map((each) => `--testPathPattern=${each}`),
   ];
   const workers = project === 'e2e' ? ['--runInBand'] : ['--maxWorkers=2'];
   return new Promise((resolve) => {
@@ -62,10 +65,12 @@ await runSetup(async () => {
     buildWeb();
     await buildServer();
     const env = { LOLLOP_TEST_DATABASE_URL: `${postgres.url}/postgres` };
-    const only = process.argv.slice(2);
-    for (const project of only.length > 0 ? only : ['node', 'web', 'e2e']) {
+    const asked = process.argv.slice(2);
+    const only = asked.filter((each) => PROJECTS.includes(each));
+    const paths = asked.filter((each) => !PROJECTS.includes(each));
+    for (const project of only.length > 0 ? only : PROJECTS) {
       say(`\n${project} tests`);
-      const counts = await runJest(project, env, path.join(reports, `${project}.json`));
+      const counts = await runJest(project, paths, env, path.join(reports, `${project}.json`));
       for (const key of Object.keys(total)) total[key] += counts[key];
     }
   } finally {
