@@ -26,7 +26,11 @@ export class ElasticEnergy {
   private readonly pressure: Float64Array;
   private readonly modes: Float64Array;
   private readonly partsOfGroup: Int32Array[];
-  private readonly groupOfPoint: Int32Array;
+  /** 1 at [group · parts + part] where the part has a say in the group */
+  private readonly members: Uint8Array;
+  private readonly dilatationOfPoint: Int32Array;
+  /** `modes` by point */
+  private readonly pointModes: Float64Array;
   private thetaAtHessian: Float64Array;
   /** D vectors of all groups, 4 a group, filled by `hessian` */
   private readonly directions: Float64Array;
@@ -49,8 +53,17 @@ export class ElasticEnergy {
     this.pressure = new Float64Array(4 * dilatation.count);
     // modes with the volume multiplied in, so that θ is a plain sum
     this.modes = Float64Array.from(dilatation.modes, (m, e) => m * points.volumes[dilatation.points[e >> 2]!]!);
-    this.groupOfPoint = groupsOfPoints(prepared);
     this.partsOfGroup = dilatationParts(prepared);
+    this.members = new Uint8Array(dilatation.count * parts.count);
+    this.partsOfGroup.forEach((list, g) => list.forEach((part) => (this.members[g * parts.count + part] = 1)));
+    this.dilatationOfPoint = new Int32Array(points.count).fill(-1);
+    this.pointModes = kernels.allocate(4 * points.count);
+    for (let g = 0; g < dilatation.count; g++) {
+      for (let e = dilatation.start[g]!; e < dilatation.start[g + 1]!; e++) {
+        this.dilatationOfPoint[dilatation.points[e]!] = g;
+        this.pointModes.set(this.modes.subarray(4 * e, 4 * e + 4), 4 * dilatation.points[e]!);
+      }
+    }
     this.thetaAtHessian = new Float64Array(4 * dilatation.count);
     this.directions = kernels.allocate(4 * dilatation.count * parts.count * 3 * parts.basis);
   }
@@ -175,9 +188,10 @@ export class ElasticEnergy {
   /**
    * K += factor · (second derivative without the constant shear part) at the pose last given to `gradient`.
    * `definite` clamps the volumetric stress so that the result cannot lose definiteness (used when Cholesky fails).
+   * `single`: products at the points in single precision.
    */
-  hessian(K: Float64Array, factor: number, definite: boolean): void {
-    const { points, dilatation, parts } = this.prepared;
+  hessian(K: Float64Array, factor: number, definite: boolean, single = false): void {
+    const { points, dilatation } = this.prepared;
     const { alpha, beta, cof, J, F } = this;
     const pressure = new Float64Array(points.count);
     for (let g = 0; g < dilatation.count; g++) {
@@ -208,46 +222,12 @@ export class ElasticEnergy {
       alpha[k] = factor * points.volumes[k]! * (second - c);
       beta[k] = factor * points.volumes[k]! * c;
     }
-    this.kernels.assemble(K, cof, alpha, beta);
+    if (single) this.kernels.assembleSingle(K, cof, alpha, beta);
+    else this.kernels.assemble(K, cof, alpha, beta);
     this.thetaAtHessian.set(this.theta);
-    const length = parts.count * 3 * parts.basis;
-    for (let g = 0; g < dilatation.count; g++) {
-      const lambda = this.groupLambda(g);
-      if (lambda === 0) continue;
-      const D = this.directions.subarray(4 * g * length, 4 * (g + 1) * length);
-      this.fillDirections(D, g, length);
-      this.kernels.addOuter(K, D, 4, this.partsOfGroup[g]!, factor * lambda);
-    }
-  }
-
-  /** D_m = Σ_k V_k m_k h_k over the points of group g, for the four modes. */
-  private fillDirections(D: Float64Array, g: number, length: number): void {
-    const { points, dilatation, parts } = this.prepared;
-    const { basis } = parts;
-    D.fill(0);
-    for (let e = dilatation.start[g]!; e < dilatation.start[g + 1]!; e++) {
-      const k = dilatation.points[e]!;
-      const group = this.groupOfPoint[k]!;
-      const n = (points.activeStart[group + 1]! - points.activeStart[group]!) * basis;
-      const G = points.gradientStart[group]! + (k - points.start[group]!) * 3 * n;
-      const m0 = this.modes[4 * e]!, m1 = this.modes[4 * e + 1]!, m2 = this.modes[4 * e + 2]!, m3 = this.modes[4 * e + 3]!; // prettier-ignore
-      for (let i = 0; i < 3; i++) {
-        const x = this.cof[9 * k + 3 * i]!;
-        const y = this.cof[9 * k + 3 * i + 1]!;
-        const z = this.cof[9 * k + 3 * i + 2]!;
-        for (let m = points.activeStart[group]!, a = 0; m < points.activeStart[group + 1]!; m++) {
-          const to = (points.activeParts[m]! * 3 + i) * basis;
-          for (let b = 0; b < basis; b++, a++) {
-            const h =
-              x * points.gradients[G + a]! + y * points.gradients[G + n + a]! + z * points.gradients[G + 2 * n + a]!;
-            D[to + b]! += m0 * h;
-            D[length + to + b]! += m1 * h;
-            D[2 * length + to + b]! += m2 * h;
-            D[3 * length + to + b]! += m3 * h;
-          }
-        }
-      }
-    }
+    this.kernels.directions(this.directions, dilatation.count, cof, this.pointModes, this.dilatationOfPoint);
+    const factors = Float64Array.from({ length: dilatation.count }, (_, g) => factor * this.groupLambda(g));
+    this.kernels.addOuter(K, this.directions, factors, this.members);
   }
 
   private groupLambda(g: number): number {

@@ -190,9 +190,9 @@ export class PotentialEnergy {
     }
   }
 
-  /** K += factor · the part that changes with the pose. */
-  addVarying(K: Float64Array, c: Float64Array, factor: number, definite: boolean): void {
-    this.elastic.hessian(K, factor, definite);
+  /** K += factor · the part that changes with the pose; `single`: products at the points in single precision. */
+  addVarying(K: Float64Array, c: Float64Array, factor: number, definite: boolean, single: boolean): void {
+    this.elastic.hessian(K, factor, definite, single);
     if (this.pull) constraintHessian(K, this.pattern, this.pull, factor);
     this.ground?.hessian(K, this.pattern, c, factor);
   }

@@ -28,17 +28,39 @@ export interface BoundKernels {
    */
   assemble(K: Float64Array, cof: Float64Array, alpha: Float64Array, beta: Float64Array): void;
 
+  /** As `assemble`, with the products at the points in single precision where the kernels have it. */
+  assembleSingle(K: Float64Array, cof: Float64Array, alpha: Float64Array, beta: Float64Array): void;
+
   /** K += Σ_k factor_k (∇N_a · ∇N_b) on the three diagonal components. */
   assembleLaplace(K: Float64Array, factor: Float64Array): void;
 
   /**
-   * K += factor Σ_m D_m D_mᵀ over the given parts, for `count` full-length vectors laid out one after another in D.
+   * D[(4g + m) · unknowns …] = Σ_k modes[4k + m] h_k over the points k with groupOf[k] = g, h_k as in `assemble`;
+   * `count` groups, points of group −1 left out.
    */
-  addOuter(K: Float64Array, D: Float64Array, count: number, parts: Int32Array, factor: number): void;
+  directions(D: Float64Array, count: number, cof: Float64Array, modes: Float64Array, groupOf: Int32Array): void;
+
+  /**
+   * K += Σ_g factors[g] Σ_m D_gm D_gmᵀ for D as `directions` makes it; member[g · parts + part] is 1 where D_g is not
+   * zero.
+   */
+  addOuter(K: Float64Array, D: Float64Array, factors: Float64Array, member: Uint8Array): void;
+
+  /** y = K x. */
+  multiply(y: Float64Array, K: Float64Array, x: Float64Array): void;
 
   /** Overwrites K by its Cholesky factor. Returns false when K is not positive definite. */
   factor(K: Float64Array): boolean;
 
   /** Solves L Lᵀ x = b in place for a factor made by `factor`. */
   solve(L: Float64Array, x: Float64Array): void;
+
+  /**
+   * Factors K, which stays, in single precision after scaling by its diagonal (Jacobi), where the kernels have it. The
+   * factor is kept for `solveSingle`. Returns false when K is not positive definite in that precision.
+   */
+  factorSingle(K: Float64Array): boolean;
+
+  /** Solves in place with the factor last made by `factorSingle`. */
+  solveSingle(x: Float64Array): void;
 }

@@ -2,30 +2,30 @@ import type { BlockPattern } from '../linear/block-pattern';
 
 /** Block operations of the plain kernels; the layout is that of BlockPattern. */
 
-/** K += factor Σ_m D_m D_mᵀ over `parts`; D holds `count` vectors of all unknowns. */
+/** K += Σ_g factors[g] Σ_m D_gm D_gmᵀ; D holds 4 vectors of all unknowns a group. */
 export function addOuterProducts(
   K: Float64Array,
   pattern: BlockPattern,
   D: Float64Array,
-  count: number,
-  parts: Int32Array,
-  factor: number,
+  factors: Float64Array,
+  member: Uint8Array,
 ): void {
-  const { size, partCount, position, blockAt } = pattern;
+  const { size, partCount, columnStart, rows, partAt } = pattern;
   const length = partCount * size;
-  for (let i = 0; i < parts.length; i++) {
-    for (let j = 0; j < parts.length; j++) {
-      const p = position[parts[i]!]!;
-      const q = position[parts[j]!]!;
-      if (p < q) continue;
-      const at = blockAt[p * partCount + q]! * size * size;
-      for (let m = 0; m < count; m++) {
-        const rowVector = m * length + parts[i]! * size;
-        const columnVector = m * length + parts[j]! * size;
-        for (let r = 0; r < size; r++) {
-          const s = factor * D[rowVector + r]!;
-          const to = at + r * size;
-          for (let c = 0; c < size; c++) K[to + c]! += s * D[columnVector + c]!;
+  for (let column = 0; column < partCount; column++) {
+    const b = partAt[column]!;
+    for (let e = columnStart[column]!; e < columnStart[column + 1]!; e++) {
+      const a = partAt[rows[e]!]!;
+      for (let g = 0; g < factors.length; g++) {
+        if (factors[g] === 0 || !member[g * partCount + a] || !member[g * partCount + b]) continue;
+        for (let m = 0; m < 4; m++) {
+          const rowVector = (4 * g + m) * length + a * size;
+          const columnVector = (4 * g + m) * length + b * size;
+          for (let r = 0; r < size; r++) {
+            const s = factors[g]! * D[rowVector + r]!;
+            const to = (e * size + r) * size;
+            for (let c = 0; c < size; c++) K[to + c]! += s * D[columnVector + c]!;
+          }
         }
       }
     }
@@ -142,6 +142,34 @@ export function solveBlocks(L: Float64Array, pattern: BlockPattern, x: Float64Ar
       let s = x[own + i]!;
       for (let k = i + 1; k < size; k++) s -= L[diagonal + k * size + i]! * x[own + k]!;
       x[own + i] = s / L[diagonal + i * size + i]!;
+    }
+  }
+}
+
+/** y = K x over the stored blocks; of diagonal blocks the lower triangle counts. */
+export function multiplyBlocks(y: Float64Array, K: Float64Array, pattern: BlockPattern, x: Float64Array): void {
+  const { partCount, size, columnStart, rows, partAt } = pattern;
+  y.fill(0);
+  for (let column = 0; column < partCount; column++) {
+    const own = partAt[column]! * size;
+    const first = columnStart[column]!;
+    for (let i = 0; i < size; i++) {
+      const row = first * size * size + i * size;
+      for (let k = 0; k < i; k++) {
+        y[own + i]! += K[row + k]! * x[own + k]!;
+        y[own + k]! += K[row + k]! * x[own + i]!;
+      }
+      y[own + i]! += K[row + i]! * x[own + i]!;
+    }
+    for (let e = first + 1; e < columnStart[column + 1]!; e++) {
+      const other = partAt[rows[e]!]! * size;
+      for (let i = 0; i < size; i++) {
+        const row = (e * size + i) * size;
+        for (let k = 0; k < size; k++) {
+          y[other + i]! += K[row + k]! * x[own + k]!;
+          y[own + k]! += K[row + k]! * x[other + i]!;
+        }
+      }
     }
   }
 }

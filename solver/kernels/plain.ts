@@ -1,6 +1,6 @@
 import type { BlockPattern } from '../linear/block-pattern';
 import type { QuadraturePoints } from '../quadrature/prepared';
-import { addOuterProducts, factorBlocks, solveBlocks } from './plain-blocks';
+import { addOuterProducts, factorBlocks, multiplyBlocks, solveBlocks } from './plain-blocks';
 import { addTransposedProduct } from './plain-product';
 import type { BoundKernels, Kernels } from './kernels';
 
@@ -18,6 +18,7 @@ class PlainKernels implements BoundKernels {
   private readonly left: Float64Array;
   private readonly right: Float64Array;
   private readonly product: Float64Array;
+  private kept: Float64Array | null = null;
 
   constructor(
     private readonly points: QuadraturePoints,
@@ -147,6 +148,10 @@ class PlainKernels implements BoundKernels {
     }
   }
 
+  assembleSingle(K: Float64Array, cof: Float64Array, alpha: Float64Array, beta: Float64Array): void {
+    this.assemble(K, cof, alpha, beta);
+  }
+
   assembleLaplace(K: Float64Array, factor: Float64Array): void {
     const { groupCount, start, gradientStart, gradients } = this.points;
     const { left: H, right, product } = this;
@@ -212,8 +217,39 @@ class PlainKernels implements BoundKernels {
     }
   }
 
-  addOuter(K: Float64Array, D: Float64Array, count: number, parts: Int32Array, factor: number): void {
-    addOuterProducts(K, this.pattern, D, count, parts, factor);
+  directions(D: Float64Array, count: number, cof: Float64Array, modes: Float64Array, groupOf: Int32Array): void {
+    const { groupCount, start, gradientStart, gradients, activeStart, activeParts } = this.points;
+    const { basis } = this;
+    const length = this.pattern.partCount * this.pattern.size;
+    D.fill(0, 0, 4 * count * length);
+    for (let g = 0; g < groupCount; g++) {
+      const n = this.width(g);
+      let G = gradientStart[g]!;
+      for (let k = start[g]!; k < start[g + 1]!; k++, G += 3 * n) {
+        if (groupOf[k]! < 0) continue;
+        const base = 4 * groupOf[k]! * length;
+        for (let i = 0; i < 3; i++) {
+          const x = cof[9 * k + 3 * i]!;
+          const y = cof[9 * k + 3 * i + 1]!;
+          const z = cof[9 * k + 3 * i + 2]!;
+          for (let e = activeStart[g]!, a = 0; e < activeStart[g + 1]!; e++) {
+            const to = base + (activeParts[e]! * 3 + i) * basis;
+            for (let b = 0; b < basis; b++, a++) {
+              const h = x * gradients[G + a]! + y * gradients[G + n + a]! + z * gradients[G + 2 * n + a]!;
+              for (let m = 0; m < 4; m++) D[to + m * length + b]! += modes[4 * k + m]! * h;
+            }
+          }
+        }
+      }
+    }
+  }
+
+  addOuter(K: Float64Array, D: Float64Array, factors: Float64Array, member: Uint8Array): void {
+    addOuterProducts(K, this.pattern, D, factors, member);
+  }
+
+  multiply(y: Float64Array, K: Float64Array, x: Float64Array): void {
+    multiplyBlocks(y, K, this.pattern, x);
   }
 
   factor(K: Float64Array): boolean {
@@ -222,6 +258,16 @@ class PlainKernels implements BoundKernels {
 
   solve(L: Float64Array, x: Float64Array): void {
     solveBlocks(L, this.pattern, x);
+  }
+
+  factorSingle(K: Float64Array): boolean {
+    this.kept ??= new Float64Array(K.length);
+    this.kept.set(K);
+    return this.factor(this.kept);
+  }
+
+  solveSingle(x: Float64Array): void {
+    this.solve(this.kept!, x);
   }
 }
 

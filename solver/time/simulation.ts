@@ -9,6 +9,7 @@ import type { Prepared } from '../quadrature/prepared';
 import { restCoefficients } from '../quadrature/rest';
 import type { Scene, Vec3 } from '../scene';
 import { SolverStopped } from './solver-stopped';
+import { SystemMatrix } from './system-matrix';
 import { systemPattern } from './system-pattern';
 
 /** Dissipation of the Hilber–Hughes–Taylor method (Hilber, Hughes and Taylor 1977), 0 … 1/3. */
@@ -61,10 +62,7 @@ export class Simulation {
   private readonly bound: BoundKernels;
   private readonly pattern: BlockPattern;
   private readonly potential: PotentialEnergy;
-  private readonly K: Float64Array;
-  private readonly constant: Float64Array;
-  /** what `constant` was made for: factors of stiffness and mass; null when it must be made anew */
-  private constantFor: { stiffness: number; mass: number } | null = null;
+  private readonly matrix: SystemMatrix;
   private factorFresh = false;
   /** vertex of the drawn surface nearest to each gauge */
   private gaugeRows: number[] = [];
@@ -84,10 +82,8 @@ export class Simulation {
     this.startGradient = new Float64Array(this.rest.length);
     this.pattern = systemPattern(prepared);
     this.bound = kernels.bind(prepared.points, this.pattern, prepared.parts.basis);
-    const length = this.pattern.blockCount * this.pattern.size ** 2;
-    this.K = this.bound.allocate(length);
-    this.constant = this.bound.allocate(length);
     this.potential = new PotentialEnergy(prepared, scene, this.bound, this.pattern);
+    this.matrix = new SystemMatrix(this.bound, this.pattern, this.potential);
     this.findGauges();
     this.potential.elastic.gradient(this.coefficients, null);
   }
@@ -96,7 +92,7 @@ export class Simulation {
   update(scene: Scene): void {
     this.potential.setScene(scene);
     this.scene = scene;
-    this.constantFor = null;
+    this.matrix.forget();
     this.factorFresh = false;
     this.hasGradient = false;
     this.findGauges();
@@ -206,11 +202,11 @@ export class Simulation {
       },
       worstJ: () => potential.elastic.worstJ(),
       refresh: (definite) => {
-        const ok = this.refresh(c, 1 - alpha, inertia, definite, first);
+        const ok = this.matrix.refresh(c, { stiffness: 1 - alpha, mass: inertia }, definite, first);
         first = false;
         return ok;
       },
-      solve: (x) => this.bound.solve(this.K, x),
+      solve: (x) => this.matrix.solve(x),
       stepped: (delta, s) => potential.elastic.predictPressure(delta, s),
     };
     const report = minimise(
@@ -251,14 +247,9 @@ export class Simulation {
     this.setForces(this.time, dt);
     potential.gradient(c, startGradient);
     // A share of the shear stiffness keeps weak mass directions of the basis from dominating.
-    this.K.fill(0);
-    potential.addMass(this.K, 1);
-    potential.addConstant(this.K, 1e-3 * dt * dt);
-    this.constantFor = null;
-    this.factorFresh = false;
     for (let u = 0; u < a.length; u++) a[u] = -startGradient[u]!;
-    if (this.bound.factor(this.K)) this.bound.solve(this.K, a);
-    else a.fill(0);
+    if (!this.matrix.solveMass(a, { stiffness: 1e-3 * dt * dt, mass: 1 })) a.fill(0);
+    this.factorFresh = false;
     this.hasGradient = true;
   }
 
@@ -270,24 +261,6 @@ export class Simulation {
     potential.loads.dead(potential.dead, time, 1);
     potential.loads.wind(potential.dead, this.coefficients, this.velocity, 1);
     potential.ground?.lag(this.coefficients, dt);
-  }
-
-  /**
-   * Factors stiffness · ∇²E + mass · M at the pose last evaluated. The geometric term keeps the pressure that the last
-   * Newton step predicted, unless this is the `first` factor of a step.
-   */
-  private refresh(c: Float64Array, stiffness: number, mass: number, definite: boolean, first: boolean): boolean {
-    const { potential, K, constant } = this;
-    if (this.constantFor?.stiffness !== stiffness || this.constantFor.mass !== mass) {
-      constant.fill(0);
-      potential.addConstant(constant, stiffness);
-      if (mass > 0) potential.addMass(constant, mass);
-      this.constantFor = { stiffness, mass };
-    }
-    K.set(constant);
-    if (first) potential.elastic.resetPressure();
-    potential.addVarying(K, c, stiffness, definite);
-    return this.bound.factor(K);
   }
 
   /**
@@ -312,11 +285,11 @@ export class Simulation {
         evaluate: (pose, gradient) => potential.gradient(pose, gradient),
         worstJ: () => potential.elastic.worstJ(),
         refresh: (definite) => {
-          const ok = this.refresh(c, 1, 0, definite, first);
+          const ok = this.matrix.refresh(c, { stiffness: 1, mass: 0 }, definite, first);
           first = false;
           return ok;
         },
-        solve: (x) => this.bound.solve(this.K, x),
+        solve: (x) => this.matrix.solve(x),
         stepped: (delta, s) => potential.elastic.predictPressure(delta, s),
       };
       const report = minimise(problem, c, r, {

@@ -78,7 +78,7 @@ describe.each(CASES)('%s', (_, scene, pulled) => {
     potential.gradient(c, r);
     potential.elastic.resetPressure();
     potential.addConstant(K, 1);
-    potential.addVarying(K, c, 1, false);
+    potential.addVarying(K, c, 1, false, false);
     const Kd = multiply(K, pattern, d);
     const h = 1e-6;
     const plus = new Float64Array(n);

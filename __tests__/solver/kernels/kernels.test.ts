@@ -19,6 +19,9 @@ const systems = [
   },
 ] as const;
 
+/** of the two dilatation groups */
+const FACTORS = [0.7, 0.4] as const;
+
 type System = ReturnType<typeof randomSystem>;
 
 const make = (index: number): System => {
@@ -45,19 +48,31 @@ function runAll(kernels: Kernels, index: number) {
   bound.accumulateGradient(r, allocate(bound, draw(9 * points.count)));
   const length = pattern.blockCount * pattern.size ** 2;
   const assembled = bound.allocate(length);
-  bound.assemble(
-    assembled,
+  const terms = [
     allocate(bound, draw(9 * points.count)),
     allocate(bound, draw(points.count)),
     allocate(bound, draw(points.count)),
-  );
+  ] as const;
+  bound.assemble(assembled, ...terms);
+  const assembledSingle = bound.allocate(length);
+  bound.assembleSingle(assembledSingle, ...terms);
   const laplace = bound.allocate(length);
   const factors = draw(points.count);
   bound.assembleLaplace(laplace, factors);
-  const own = Int32Array.from(points.activeParts.subarray(0, points.activeStart[1]));
-  const D = allocate(bound, draw(3 * unknowns));
+  // Dilatation groups are the first two groups of points; the first point belongs to none.
+  const groupOf = groupsOf(points);
+  const modes = allocate(bound, draw(4 * points.count));
+  const cof = allocate(bound, draw(9 * points.count));
+  const groups = Math.min(2, pattern.partCount);
+  const D = bound.allocate(4 * groups * unknowns);
+  bound.directions(D, groups, cof, modes, groupOf);
+  const member = new Uint8Array(groups * pattern.partCount);
+  D.forEach((x, u) => {
+    const [vector, part] = [Math.floor(u / unknowns), Math.floor((u % unknowns) / pattern.size)];
+    if (x !== 0) member[Math.floor(vector / 4) * pattern.partCount + part] = 1;
+  });
   const outer = bound.allocate(length);
-  bound.addOuter(outer, D, 3, own, 0.7);
+  bound.addOuter(outer, D, Float64Array.from(FACTORS.slice(0, groups)), member);
   // Laplacian and outer products are semi-definite; a firm diagonal makes a matrix that Cholesky must accept.
   const K = bound.allocate(length);
   for (let e = 0; e < length; e++) K[e] = Math.abs(factors[0]!) * outer[e]!;
@@ -69,17 +84,32 @@ function runAll(kernels: Kernels, index: number) {
     }
   }
   const before = fullMatrix(K, pattern);
+  const y = new Float64Array(unknowns);
+  bound.multiply(y, K, c);
+  const kept = K.slice();
+  const single = { definite: bound.factorSingle(K), x: draw(unknowns), b: new Float64Array() };
+  expect(K).toEqual(kept);
+  single.b = single.x.slice();
+  bound.solveSingle(single.x);
   const definite = bound.factor(K);
   const b = draw(unknowns);
   const x = b.slice();
   bound.solve(K, x);
   return {
-    c, r, D, b, x, definite, before,
+    c, r, D: D.slice(), b, x, y, modes: modes.slice(), cof: cof.slice(), definite, before, single,
+    assembledSingle: fullMatrix(assembledSingle, pattern),
     F: F.slice(),
     assembled: fullMatrix(assembled, pattern),
     laplace: fullMatrix(laplace, pattern),
     outer: fullMatrix(outer, pattern),
   }; // prettier-ignore
+}
+
+/** The group of points that every point but the first belongs to, as far as there are two. */
+function groupsOf({ count, groupCount, start }: System['points']): Int32Array {
+  const of = new Int32Array(count).fill(-1);
+  for (let g = 0; g < Math.min(2, groupCount); g++) of.fill(g, Math.max(1, start[g]!), start[g + 1]);
+  return of;
 }
 
 const flat = (matrix: Float64Array[]) => matrix.flatMap((row) => [...row]);
@@ -135,33 +165,62 @@ describe.each(systems.map((system, index) => [system.name, index] as const))('%s
     expect(difference(flat(plain.laplace), flat(laplace))).toBeLessThan(1e-13);
   });
 
-  test('outer products touch the given parts and nothing else', () => {
+  test('dilatation directions sum what their description says, and outer products add them', () => {
     const { points, unknowns } = make(index);
-    const own = new Set(points.activeParts.subarray(0, points.activeStart[1]));
-    const held = (u: number) => own.has(Math.floor(u / (3 * basis)));
-    const expected = Array.from({ length: unknowns }, (__, u) =>
-      Float64Array.from({ length: unknowns }, (___, v) =>
-        held(u) && held(v)
-          ? 0.7 * [0, 1, 2].reduce((sum, m) => sum + plain.D[m * unknowns + u]! * plain.D[m * unknowns + v]!, 0)
-          : 0,
+    const expected = new Float64Array(plain.D.length);
+    groupsOf(points).forEach((of, k) => {
+      if (of < 0) return;
+      const parts = points.activeParts.subarray(points.activeStart[of], points.activeStart[of + 1]);
+      const n = parts.length * basis;
+      const at = points.gradientStart[of]! + (k - points.start[of]!) * 3 * n;
+      for (let a = 0; a < n; a++) {
+        for (let i = 0; i < 3; i++) {
+          const h = [0, 1, 2].reduce(
+            (sum, d) => sum + plain.cof[9 * k + 3 * i + d]! * points.gradients[at + d * n + a]!,
+            0,
+          );
+          const unknown = (parts[Math.floor(a / basis)]! * 3 + i) * basis + (a % basis);
+          for (let m = 0; m < 4; m++) expected[(4 * of + m) * unknowns + unknown]! += plain.modes[4 * k + m]! * h;
+        }
+      }
+    });
+    expect(difference(plain.D, expected)).toBeLessThan(1e-13);
+    const outer = Array.from({ length: unknowns }, (__, u) =>
+      Float64Array.from(
+        { length: unknowns },
+        (___, v) =>
+        Array.from({ length: expected.length / unknowns }, (____, m) => FACTORS[m >> 2]! * expected[m * unknowns + u]! * expected[m * unknowns + v]!).reduce((x, y) => x + y), // prettier-ignore
       ),
     );
-    expect(difference(flat(plain.outer), flat(expected))).toBeLessThan(1e-13);
+    expect(difference(flat(plain.outer), flat(outer))).toBeLessThan(1e-13);
   });
 
   test('the factor solves the system, fill and ordering included', () => {
     expect(plain.definite).toBe(true);
     const product = plain.before.map((row) => row.reduce((sum, value, v) => sum + value * plain.x[v]!, 0));
     expect(difference(product, plain.b)).toBeLessThan(1e-12);
+    const image = plain.before.map((row) => row.reduce((sum, value, v) => sum + value * plain.c[v]!, 0));
+    expect(difference(plain.y, image)).toBeLessThan(1e-12);
   });
 
   test('the WebAssembly twin gives the same numbers', () => {
     const wasm = runAll(wasmKernels()!, index);
-    for (const name of ['F', 'r', 'x'] as const) expect(difference(wasm[name], plain[name])).toBeLessThan(1e-12);
+    for (const name of ['F', 'r', 'x', 'y', 'D'] as const)
+      expect(difference(wasm[name], plain[name])).toBeLessThan(1e-12);
     for (const name of ['assembled', 'laplace', 'outer'] as const) {
       expect(difference(flat(wasm[name]), flat(plain[name]))).toBeLessThan(1e-12);
     }
     expect(wasm.definite).toBe(true);
+  });
+
+  test('single precision is close to double', () => {
+    const wasm = runAll(wasmKernels()!, index);
+    expect(difference(flat(wasm.assembledSingle), flat(plain.assembled))).toBeLessThan(2e-6);
+    expect(wasm.single.definite).toBe(true);
+    for (const { before, single } of [wasm, plain]) {
+      const product = before.map((row) => row.reduce((sum, value, v) => sum + value * single.x[v]!, 0));
+      expect(difference(product, single.b)).toBeLessThan(1e-4);
+    }
   });
 });
 
@@ -176,6 +235,7 @@ describe.each([plainKernels, wasmKernels()!].map((kernels) => [kernels.name, ker
         for (let u = 0; u < pattern.size; u++) K[pattern.columnStart[p]! * area + u * (pattern.size + 1)] = 1;
       }
       K[pattern.columnStart[column]! * area + 29 * (pattern.size + 1)] = -1e-9;
+      expect(bound.factorSingle(K)).toBe(false);
       expect(bound.factor(K)).toBe(false);
     }
   });
@@ -184,6 +244,7 @@ describe.each([plainKernels, wasmKernels()!].map((kernels) => [kernels.name, ker
     const { points, pattern } = make(2);
     const bound = kernels.bind(points, pattern, 10);
     const K = bound.allocate(pattern.blockCount * pattern.size ** 2).fill(NaN);
+    expect(bound.factorSingle(K)).toBe(false);
     expect(bound.factor(K)).toBe(false);
   });
 

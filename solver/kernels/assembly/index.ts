@@ -2,6 +2,8 @@
 // solver/kernels/plain*.ts, two doubles at a time; pointers are byte offsets into the imported memory.
 
 // @ts-nocheck
+export { assembleSingle, factorSingle, solveSingle } from './single';
+
 const D: usize = 8;
 
 // @inline
@@ -329,38 +331,136 @@ export function assembleLaplace(
   }
 }
 
-// K += factor Σ_m D_m D_mᵀ over the listed parts.
+// D[4g + m] = Σ_k modes[4k + m] h_k over the points k of group g = groupOf[k] (none where it is negative).
+export function directions(
+  out: usize,
+  count: i32,
+  cof: usize,
+  modes: usize,
+  groupOf: usize,
+  groupCount: i32,
+  start: usize,
+  activeStart: usize,
+  activeParts: usize,
+  gradientStart: usize,
+  gradients: usize,
+  basis: i32,
+  partCount: i32,
+): void {
+  const length = <usize>(partCount * 3 * basis) * D;
+  memory.fill(out, 0, <usize>(4 * count) * length);
+  for (let g = 0; g < groupCount; g++) {
+    const n = width(activeStart, g, basis);
+    const bytes = <usize>n * D;
+    const from = i32At(activeStart, g);
+    const active = i32At(activeStart, g + 1) - from;
+    const last = i32At(start, g + 1);
+    let G = gradients + <usize>i32At(gradientStart, g) * D;
+    for (let k = i32At(start, g); k < last; k++, G += 3 * bytes) {
+      const own = i32At(groupOf, k);
+      if (own < 0) continue;
+      const w = modes + <usize>(4 * k) * D;
+      const m0 = v128.load64_splat(w);
+      const m1 = v128.load64_splat(w, 8);
+      const m2 = v128.load64_splat(w, 16);
+      const m3 = v128.load64_splat(w, 24);
+      const base = out + <usize>(4 * own) * length;
+      const f = cof + <usize>(9 * k) * D;
+      for (let i = 0; i < 3; i++) {
+        const x = v128.load64_splat(f + <usize>(3 * i) * D);
+        const y = v128.load64_splat(f + <usize>(3 * i + 1) * D);
+        const z = v128.load64_splat(f + <usize>(3 * i + 2) * D);
+        let p = G;
+        for (let m = 0; m < active; m++) {
+          let to = base + <usize>((i32At(activeParts, from + m) * 3 + i) * basis) * D;
+          for (let a: usize = 0; a < <usize>basis * D; a += 16, p += 16, to += 16) {
+            const sum = f64x2.add(f64x2.mul(x, v128.load(p)), f64x2.mul(y, v128.load(p + bytes)));
+            const h = f64x2.add(sum, f64x2.mul(z, v128.load(p + 2 * bytes)));
+            v128.store(to, f64x2.add(v128.load(to), f64x2.mul(m0, h)));
+            v128.store(to + length, f64x2.add(v128.load(to + length), f64x2.mul(m1, h)));
+            v128.store(to + 2 * length, f64x2.add(v128.load(to + 2 * length), f64x2.mul(m2, h)));
+            v128.store(to + 3 * length, f64x2.add(v128.load(to + 3 * length), f64x2.mul(m3, h)));
+          }
+        }
+      }
+    }
+  }
+}
+
+// K += Σ_g factors[g] Σ_m D_gm D_gmᵀ; member[g · partCount + part] tells where D_g is not zero. `list`: room for the
+// factor and both ends of 4 vectors a group.
 export function addOuter(
   K: usize,
   vectors: usize,
   count: i32,
-  parts: usize,
-  partsLength: i32,
-  factor: f64,
-  position: usize,
-  blockAt: usize,
+  factors: usize,
+  member: usize,
+  list: usize,
   partCount: i32,
   size: i32,
+  columnStart: usize,
+  rows: usize,
+  partAt: usize,
 ): void {
   const length = <usize>(partCount * size) * D;
   const bytes = <usize>size * D;
-  for (let i = 0; i < partsLength; i++) {
-    for (let j = 0; j < partsLength; j++) {
-      const a = i32At(parts, i);
-      const b = i32At(parts, j);
-      const p = i32At(position, a);
-      const q = i32At(position, b);
-      if (p < q) continue;
-      const at = K + <usize>(i32At(blockAt, p * partCount + q) * size * size) * D;
-      for (let m: usize = 0; m < <usize>count; m++) {
-        const rows = vectors + m * length + <usize>(a * size) * D;
-        const columns = vectors + m * length + <usize>(b * size) * D;
-        for (let r: usize = 0; r < <usize>size; r++) {
-          const s = f64x2.splat(factor * load<f64>(rows + r * D));
-          const to = at + r * bytes;
-          for (let c: usize = 0; c < bytes; c += 16) {
-            v128.store(to + c, f64x2.add(v128.load(to + c), f64x2.mul(s, v128.load(columns + c))));
+  for (let column = 0; column < partCount; column++) {
+    const b = i32At(partAt, column);
+    const end = i32At(columnStart, column + 1);
+    for (let e = i32At(columnStart, column); e < end; e++) {
+      const a = i32At(partAt, i32At(rows, e));
+      let n = 0;
+      for (let g = 0; g < count; g++) {
+        const factor = load<f64>(factors + <usize>g * D);
+        const places = member + <usize>(g * partCount);
+        if (factor == 0 || !load<u8>(places + <usize>a) || !load<u8>(places + <usize>b)) continue;
+        for (let m = 0; m < 4; m++, n++) {
+          const vector = vectors + <usize>(4 * g + m) * length;
+          store<f64>(list + <usize>(16 * n), factor);
+          store<u32>(list + <usize>(16 * n), <u32>(vector + <usize>a * bytes), 8);
+          store<u32>(list + <usize>(16 * n), <u32>(vector + <usize>b * bytes), 12);
+        }
+      }
+      if (n == 0) continue;
+      const at = K + <usize>e * bytes * <usize>size;
+      for (let i: usize = 0; i < bytes; i += 24) {
+        for (let j: usize = 0; j < bytes; j += 48) {
+          let s00 = f64x2.splat(0), s01 = f64x2.splat(0), s02 = f64x2.splat(0); // prettier-ignore
+          let s10 = f64x2.splat(0), s11 = f64x2.splat(0), s12 = f64x2.splat(0); // prettier-ignore
+          let s20 = f64x2.splat(0), s21 = f64x2.splat(0), s22 = f64x2.splat(0); // prettier-ignore
+          for (let k: usize = 0; k < <usize>n; k++) {
+            const entry = list + 16 * k;
+            const f = v128.load64_splat(entry);
+            const p = <usize>load<u32>(entry, 8) + i;
+            const q = <usize>load<u32>(entry, 12) + j;
+            const y0 = v128.load(q);
+            const y1 = v128.load(q, 16);
+            const y2 = v128.load(q, 32);
+            let x = f64x2.mul(f, v128.load64_splat(p));
+            s00 = f64x2.add(s00, f64x2.mul(x, y0));
+            s01 = f64x2.add(s01, f64x2.mul(x, y1));
+            s02 = f64x2.add(s02, f64x2.mul(x, y2));
+            x = f64x2.mul(f, v128.load64_splat(p, 8));
+            s10 = f64x2.add(s10, f64x2.mul(x, y0));
+            s11 = f64x2.add(s11, f64x2.mul(x, y1));
+            s12 = f64x2.add(s12, f64x2.mul(x, y2));
+            x = f64x2.mul(f, v128.load64_splat(p, 16));
+            s20 = f64x2.add(s20, f64x2.mul(x, y0));
+            s21 = f64x2.add(s21, f64x2.mul(x, y1));
+            s22 = f64x2.add(s22, f64x2.mul(x, y2));
           }
+          let c = at + (i >> 3) * bytes + j;
+          v128.store(c, f64x2.add(v128.load(c), s00));
+          v128.store(c, f64x2.add(v128.load(c, 16), s01), 16);
+          v128.store(c, f64x2.add(v128.load(c, 32), s02), 32);
+          c += bytes;
+          v128.store(c, f64x2.add(v128.load(c), s10));
+          v128.store(c, f64x2.add(v128.load(c, 16), s11), 16);
+          v128.store(c, f64x2.add(v128.load(c, 32), s12), 32);
+          c += bytes;
+          v128.store(c, f64x2.add(v128.load(c), s20));
+          v128.store(c, f64x2.add(v128.load(c, 16), s21), 16);
+          v128.store(c, f64x2.add(v128.load(c, 32), s22), 32);
         }
       }
     }
@@ -544,6 +644,53 @@ export function solveBlocks(
         s -= load<f64>(diagonal + <usize>k * bytes + <usize>i * D) * load<f64>(own + <usize>k * D);
       }
       store<f64>(own + <usize>i * D, s / load<f64>(diagonal + <usize>i * bytes + <usize>i * D));
+    }
+  }
+}
+
+// y = K x over the stored blocks; of diagonal blocks the lower triangle counts.
+export function multiplyBlocks(
+  y: usize,
+  K: usize,
+  x: usize,
+  partCount: i32,
+  size: i32,
+  columnStart: usize,
+  rows: usize,
+  partAt: usize,
+): void {
+  const bytes = <usize>size * D;
+  const area = <usize>size * bytes;
+  memory.fill(y, 0, <usize>partCount * bytes);
+  for (let column = 0; column < partCount; column++) {
+    const first = i32At(columnStart, column);
+    const ownX = x + <usize>i32At(partAt, column) * bytes;
+    const ownY = y + <usize>i32At(partAt, column) * bytes;
+    for (let i: usize = 0; i < bytes; i += D) {
+      const row = K + <usize>first * area + (i >> 3) * bytes;
+      const value = load<f64>(ownX + i);
+      let s = load<f64>(row + i) * value;
+      for (let k: usize = 0; k < i; k += D) {
+        s += load<f64>(row + k) * load<f64>(ownX + k);
+        store<f64>(ownY + k, load<f64>(ownY + k) + load<f64>(row + k) * value);
+      }
+      store<f64>(ownY + i, load<f64>(ownY + i) + s);
+    }
+    const end = i32At(columnStart, column + 1);
+    for (let e = first + 1; e < end; e++) {
+      const other = <usize>i32At(partAt, i32At(rows, e)) * bytes;
+      for (let i: usize = 0; i < bytes; i += D) {
+        const row = K + <usize>e * area + (i >> 3) * bytes;
+        const v = v128.load64_splat(x + other + i);
+        let s = f64x2.splat(0);
+        for (let k: usize = 0; k < bytes; k += 16) {
+          const m = v128.load(row + k);
+          s = f64x2.add(s, f64x2.mul(m, v128.load(ownX + k)));
+          v128.store(ownY + k, f64x2.add(v128.load(ownY + k), f64x2.mul(m, v)));
+        }
+        const to = y + other + i;
+        store<f64>(to, load<f64>(to) + (f64x2.extract_lane(s, 0) + f64x2.extract_lane(s, 1)));
+      }
     }
   }
 }
