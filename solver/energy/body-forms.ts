@@ -1,28 +1,6 @@
 import type { BlockPattern } from '../linear/block-pattern';
 import type { BlockPairs } from '../quadrature/prepared';
 
-/** out += factor · A x on each of the three components, for the symmetric scalar form A given in block pairs. */
-export function applyForm(out: Float64Array, form: BlockPairs, basis: number, x: Float64Array, factor: number): void {
-  const { rows, columns, values } = form;
-  for (let p = 0; p < rows.length; p++) {
-    const block = p * basis * basis;
-    for (let i = 0; i < 3; i++) {
-      const r = (rows[p]! * 3 + i) * basis;
-      const c = (columns[p]! * 3 + i) * basis;
-      for (let a = 0; a < basis; a++) {
-        let s = 0;
-        for (let b = 0; b < basis; b++) s += values[block + a * basis + b]! * x[c + b]!;
-        out[r + a]! += factor * s;
-      }
-      if (r === c) continue;
-      for (let a = 0; a < basis; a++) {
-        const s = factor * x[r + a]!;
-        for (let b = 0; b < basis; b++) out[c + b]! += s * values[block + a * basis + b]!;
-      }
-    }
-  }
-}
-
 /** K += factor · A on the three diagonal components. */
 export function addForm(K: Float64Array, pattern: BlockPattern, form: BlockPairs, basis: number, factor: number): void {
   const { position, blockAt, partCount, size } = pattern;

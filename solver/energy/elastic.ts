@@ -227,7 +227,8 @@ export class ElasticEnergy {
     this.thetaAtHessian.set(this.theta);
     this.kernels.directions(this.directions, dilatation.count, cof, this.pointModes, this.dilatationOfPoint);
     const factors = Float64Array.from({ length: dilatation.count }, (_, g) => factor * this.groupLambda(g));
-    this.kernels.addOuter(K, this.directions, factors, this.members);
+    if (single) this.kernels.addOuterSingle(K, this.directions, factors, this.members);
+    else this.kernels.addOuter(K, this.directions, factors, this.members);
   }
 
   private groupLambda(g: number): number {

@@ -1,7 +1,7 @@
 import type { Prepared } from '../quadrature/prepared';
 import { samplesInRegion } from '../quadrature/regions';
 import type { Scene } from '../scene';
-import { applyForm } from './body-forms';
+import { applyForm } from '../kernels/plain-blocks';
 import { evaluateRow, scatterRow } from './rows';
 
 /** A load that found its samples, ready to be added to the force vector. */

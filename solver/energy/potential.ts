@@ -1,8 +1,8 @@
-import type { BoundKernels } from '../kernels/kernels';
+import type { BoundForm, BoundKernels } from '../kernels/kernels';
 import type { BlockPattern } from '../linear/block-pattern';
 import type { Prepared } from '../quadrature/prepared';
 import type { Scene } from '../scene';
-import { addDiagonal, addForm, applyForm } from './body-forms';
+import { addDiagonal, addForm } from './body-forms';
 import { constraintGradient, constraintHessian, type Constraint } from './constraints';
 import { GroundContact } from './contact';
 import { ElasticEnergy } from './elastic';
@@ -38,6 +38,8 @@ export class PotentialEnergy {
   /** Share of the follower pressure in force, 0…1. */
   pressureShare = 1;
   private readonly ties: Constraint | null;
+  /** one a body */
+  private readonly forms: { mass: BoundForm; stabilisation: BoundForm }[];
   private readonly curvatureMass: Float64Array;
   private readonly curvatureStiffness: Float64Array;
   private scene: Scene;
@@ -50,6 +52,10 @@ export class PotentialEnergy {
   ) {
     this.scene = scene;
     this.elastic = new ElasticEnergy(prepared, kernels);
+    this.forms = prepared.matrices.map(({ mass, stabilisation }) => ({
+      mass: kernels.bindForm(mass),
+      stabilisation: kernels.bindForm(stabilisation),
+    }));
     this.dead = new Float64Array(prepared.parts.count * 3 * prepared.parts.basis);
     const { ties } = prepared;
     this.ties =
@@ -144,7 +150,7 @@ export class PotentialEnergy {
       const s = this.stabilisationOf(b);
       const form = (this.scratch ??= new Float64Array(r.length));
       form.fill(0);
-      applyForm(form, prepared.matrices[b]!.stabilisation, prepared.parts.basis, c, 1);
+      this.forms[b]!.stabilisation.apply(form, c, 1);
       for (let u = 0; u < r.length; u++) {
         energy += s * form[u]! * c[u]!;
         r[u]! += 2 * s * form[u]!;
@@ -211,11 +217,10 @@ export class PotentialEnergy {
   /** out = M x. */
   applyMass(out: Float64Array, x: Float64Array): void {
     const { prepared } = this;
-    const { basis } = prepared.parts;
     out.fill(0);
-    prepared.bodies.forEach((body, b) => {
-      applyForm(out, prepared.matrices[b]!.mass, basis, x, this.scene.materials[body.material]!.density);
-    });
+    prepared.bodies.forEach((body, b) =>
+      this.forms[b]!.mass.apply(out, x, this.scene.materials[body.material]!.density),
+    );
     for (let u = 0; u < x.length; u++) out[u]! += this.curvatureMass[u]! * x[u]!;
   }
 

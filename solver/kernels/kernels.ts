@@ -1,5 +1,5 @@
 import type { BlockPattern } from '../linear/block-pattern';
-import type { QuadraturePoints } from '../quadrature/prepared';
+import type { BlockPairs, QuadraturePoints } from '../quadrature/prepared';
 
 /**
  * The hot loops of the solver on flat arrays. The plain twin is the reference and the fallback; another twin must
@@ -46,6 +46,12 @@ export interface BoundKernels {
    */
   addOuter(K: Float64Array, D: Float64Array, factors: Float64Array, member: Uint8Array): void;
 
+  /** As `addOuter` in single precision where the kernels have it; no factor is negative. */
+  addOuterSingle(K: Float64Array, D: Float64Array, factors: Float64Array, member: Uint8Array): void;
+
+  /** Takes in a constant scalar form of parts; lives as long as the binding. */
+  bindForm(form: BlockPairs): BoundForm;
+
   /** y = K x. */
   multiply(y: Float64Array, K: Float64Array, x: Float64Array): void;
 
@@ -63,4 +69,9 @@ export interface BoundKernels {
 
   /** Solves in place with the factor last made by `factorSingle`. */
   solveSingle(x: Float64Array): void;
+}
+
+export interface BoundForm {
+  /** out += factor · A x on each of the three components, for the symmetric scalar form A. */
+  apply(out: Float64Array, x: Float64Array, factor: number): void;
 }

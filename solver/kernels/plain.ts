@@ -1,8 +1,8 @@
 import type { BlockPattern } from '../linear/block-pattern';
-import type { QuadraturePoints } from '../quadrature/prepared';
-import { addOuterProducts, factorBlocks, multiplyBlocks, solveBlocks } from './plain-blocks';
+import type { BlockPairs, QuadraturePoints } from '../quadrature/prepared';
+import { addOuterProducts, applyForm, factorBlocks, multiplyBlocks, solveBlocks } from './plain-blocks';
 import { addTransposedProduct } from './plain-product';
-import type { BoundKernels, Kernels } from './kernels';
+import type { BoundForm, BoundKernels, Kernels } from './kernels';
 
 /** The kernels in plain TypeScript, double precision, fixed order of summation. */
 export const plainKernels: Kernels = {
@@ -246,6 +246,14 @@ class PlainKernels implements BoundKernels {
 
   addOuter(K: Float64Array, D: Float64Array, factors: Float64Array, member: Uint8Array): void {
     addOuterProducts(K, this.pattern, D, factors, member);
+  }
+
+  addOuterSingle(K: Float64Array, D: Float64Array, factors: Float64Array, member: Uint8Array): void {
+    this.addOuter(K, D, factors, member);
+  }
+
+  bindForm(form: BlockPairs): BoundForm {
+    return { apply: (out, x, factor) => applyForm(out, form, this.basis, x, factor) };
   }
 
   multiply(y: Float64Array, K: Float64Array, x: Float64Array): void {

@@ -1,6 +1,6 @@
 import type { BlockPattern } from '../linear/block-pattern';
-import type { QuadraturePoints } from '../quadrature/prepared';
-import type { BoundKernels, Kernels } from './kernels';
+import type { BlockPairs, QuadraturePoints } from '../quadrature/prepared';
+import type { BoundForm, BoundKernels, Kernels } from './kernels';
 import { KERNELS_WASM_BASE64 } from './kernels-wasm';
 
 /** What solver/kernels/assembly exports; pointers are byte offsets. */
@@ -14,7 +14,9 @@ interface Exports {
   factorBlocks(...args: number[]): number;
   solveBlocks(...args: number[]): void;
   multiplyBlocks(...args: number[]): void;
+  applyForm(...args: number[]): void;
   assembleSingle(...args: number[]): void;
+  addOuterSingle(...args: number[]): void;
   factorSingle(...args: number[]): number;
   solveSingle(...args: number[]): void;
 }
@@ -22,6 +24,8 @@ interface Exports {
 const PAGE = 65536;
 /** Matrices there is room for. Pages that nobody touches cost nothing. */
 const MATRICES = 4;
+/** Constant forms there is room for. */
+const FORMS = 2;
 let compiled: WebAssembly.Module | null | undefined;
 
 /** The kernels as WebAssembly with SIMD; null where the engine lacks it. */
@@ -75,6 +79,7 @@ class WasmKernels implements BoundKernels {
     factor: number;
     scale: number;
     scratch: number;
+    directions: number;
     vectors: number;
   };
 
@@ -95,7 +100,7 @@ class WasmKernels implements BoundKernels {
     // Everything is allocated from one memory of a fixed size: growing it would take the views away from the callers.
     const doubles =
       points.gradients.length + 44 * points.count + widest * (3 + 5 * longest + widest) + 12 * unknowns +
-      MATRICES * blockCount * size * size + 9 * partCount + partCount * partCount + 4 * partCount * unknowns + 2 * size * size +
+      MATRICES * blockCount * size * size + FORMS * blockCount * basis * basis + 9 * partCount + partCount * partCount + 4 * partCount * unknowns + 2 * size * size +
       Math.ceil(singleFloats(points, pattern, basis) / 2) + unknowns; // prettier-ignore
     const integers =
       4 * points.groupCount +
@@ -181,6 +186,7 @@ class WasmKernels implements BoundKernels {
       factor: this.take(4 * blockCount * wide * wide),
       scale: this.take(8 * partCount * size),
       scratch: this.take(8 * wide * wide),
+      directions: this.take(16 * partCount * partCount * wide),
       vectors: this.take(8 * partCount * wide),
     };
   }
@@ -261,6 +267,36 @@ class WasmKernels implements BoundKernels {
       this.offset(K), this.offset(D), factors.length, kept.byteOffset, places.byteOffset, list, partCount, size,
       this.columnStart, this.rows, this.partAt,
     ); // prettier-ignore
+  }
+
+  addOuterSingle(K: Float64Array, D: Float64Array, factors: Float64Array, member: Uint8Array): void {
+    const { partCount, size } = this.pattern;
+    const { factors: kept, member: places, list } = this.outer;
+    const { wide, directions, scratch } = this.single;
+    kept.set(factors);
+    places.set(member);
+    this.exports.addOuterSingle(
+      this.offset(K), this.offset(D), factors.length, kept.byteOffset, places.byteOffset, directions, scratch, list,
+      partCount, size, wide, this.columnStart, this.rows, this.partAt,
+    ); // prettier-ignore
+  }
+
+  bindForm({ rows, columns, values }: BlockPairs): BoundForm {
+    const at = this.allocate(values.length);
+    at.set(values);
+    const rowsAt = this.copyInts(rows);
+    const columnsAt = this.copyInts(columns);
+    return {
+      apply: (out, x, factor) => {
+        this.vector.set(x);
+        this.result.set(out);
+        this.exports.applyForm(
+          this.result.byteOffset, rows.length, rowsAt, columnsAt, at.byteOffset, this.basis, this.vector.byteOffset,
+          factor,
+        ); // prettier-ignore
+        out.set(this.result);
+      },
+    };
   }
 
   multiply(y: Float64Array, K: Float64Array, x: Float64Array): void {
@@ -356,6 +392,6 @@ function singleFloats(points: QuadraturePoints, { partCount, size, blockCount }:
   const wide = whole(size);
   return (
     paddedGradients(points, basis) + 12 * longest * widest + widest * widest +
-    (blockCount + 2) * wide * wide + 2 * partCount * wide
+    (blockCount + 2) * wide * wide + 2 * partCount * wide + 4 * partCount * partCount * wide
   ); // prettier-ignore
 }

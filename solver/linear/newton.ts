@@ -1,3 +1,5 @@
+import { QuasiNewton } from './quasi-newton';
+
 /**
  * Newton's method with a line search on a total energy, for pose problems in which a full step may turn the body
  * inside out. Steps are measured as the largest change of a coefficient over the model's size.
@@ -8,11 +10,14 @@ export interface NewtonProblem {
   evaluate(c: Float64Array, r: Float64Array): number;
   /** Smallest J of the pose last evaluated. */
   worstJ(): number;
-  /** Factors the Hessian at the pose last evaluated. False when it is not positive definite. */
-  refresh(definite: boolean): boolean;
-  /** Solves with the factor, in place. */
-  solve(x: Float64Array): void;
-  /** Tells that a share s of the step delta was taken from the pose of the last refresh. */
+  /**
+   * Factors the Hessian at the pose last evaluated; `predicted`: `stepped` told how that pose was reached. False when
+   * it is not positive definite.
+   */
+  refresh(definite: boolean, predicted: boolean): boolean;
+  /** Solves with the factor, in place: `closely`, or as well as the factor alone does it. */
+  solve(x: Float64Array, closely: boolean): void;
+  /** Tells that a share s of the step delta was taken from the pose of a refresh. */
   stepped(delta: Float64Array, s: number): void;
 }
 
@@ -44,8 +49,15 @@ const TRUSTED_STEPS = 15;
 const WORST_J = 0.02;
 /** A guess that squeezes the body further than this is not worth starting from. */
 const SAFE_GUESS_J = 0.3;
-/** A lagged factor is renewed when a step is not at least this much smaller than the one before. */
-const SLOW = 0.35;
+/**
+ * A lagged factor is renewed when a step is not below this share of the one so many steps before, or far above the
+ * last one. A factor costs as much as ten steps and more.
+ */
+const SLOW = 0.5;
+const PATIENCE = 8;
+const WORSE = 5;
+/** After so many factors that failed to bring a solve to its end, every step gets its own. */
+const FAILURES = 2;
 
 /**
  * Minimises from c in place, beginning at `guess` instead when that is an allowed pose. r holds the gradient at the
@@ -70,22 +82,27 @@ export function minimise(
   // A lagged factor that fails to shrink the steps is renewed; when the new one fails too, every step gets its own.
   let every = options.factor === 'every';
   let failures = 0;
+  const corrections = new QuasiNewton();
+  const lately: number[] = [];
   const renew = () => {
     fresh = true;
-    every ||= ++failures > 1;
+    every ||= ++failures > FAILURES;
   };
   let factors = 0;
   let previous = Infinity;
+  let predicted = false;
   const changes: number[] = [];
   for (let step = 0; step < maxSteps; step++) {
     const renewed = fresh || every;
     if (renewed) {
-      if (!problem.refresh(false) && !problem.refresh(true)) break;
+      if (!problem.refresh(false, predicted) && !problem.refresh(true, predicted)) break;
       factors++;
       fresh = false;
+      corrections.clear();
+      lately.length = 0;
     }
     for (let u = 0; u < n; u++) delta[u] = -r[u]!;
-    problem.solve(delta);
+    corrections.direct(delta, (x) => problem.solve(x, renewed));
     let slope = 0;
     let largest = 0;
     for (let u = 0; u < n; u++) {
@@ -95,7 +112,8 @@ export function minimise(
     const change = largest / size;
     if (!Number.isFinite(change)) break;
     // A stale factor that does not help is renewed at the same pose.
-    if (!renewed && (change > SLOW * previous || slope >= 0)) {
+    const then = lately[lately.length - PATIENCE] ?? Infinity;
+    if (!renewed && (change > SLOW * then || change > WORSE * previous || slope >= 0)) {
       renew();
       previous = Infinity;
       continue;
@@ -123,10 +141,16 @@ export function minimise(
       previous = Infinity;
       continue;
     }
+    corrections.learn(
+      delta.map((d) => s * d),
+      trialGradient.map((g, u) => g - r[u]!),
+    );
     c.set(trial);
     r.set(trialGradient);
-    problem.stepped(delta, s);
+    if (renewed) problem.stepped(delta, s);
+    predicted = renewed;
     changes.push(change);
+    lately.push(change);
     previous = s < 1 ? Infinity : change;
     if (s < 1) renew();
     if (s === 1 && change <= tolerance) return { converged: true, steps: step + 1, factors, change, changes };

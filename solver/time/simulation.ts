@@ -16,7 +16,7 @@ import { systemPattern } from './system-pattern';
 const HHT_ALPHA = 0.1;
 
 /** Largest change of a coefficient over the diagonal at which a step counts as solved. */
-const LIVE_TOLERANCE = 1e-5;
+const LIVE_TOLERANCE = 5e-5;
 const BAKE_TOLERANCE = 1e-7;
 const STATIC_TOLERANCE = 1e-11;
 
@@ -187,7 +187,6 @@ export class Simulation {
     const work = new Float64Array(n);
     const product = new Float64Array(n);
     const r = new Float64Array(n);
-    let first = true;
     const problem: NewtonProblem = {
       evaluate: (pose, gradient) => {
         const energy = potential.gradient(pose, gradient);
@@ -201,12 +200,9 @@ export class Simulation {
         return total;
       },
       worstJ: () => potential.elastic.worstJ(),
-      refresh: (definite) => {
-        const ok = this.matrix.refresh(c, { stiffness: 1 - alpha, mass: inertia }, definite, first);
-        first = false;
-        return ok;
-      },
-      solve: (x) => this.matrix.solve(x),
+      refresh: (definite, predicted) =>
+        this.matrix.refresh(c, { stiffness: 1 - alpha, mass: inertia }, definite, predicted),
+      solve: (x, closely) => this.matrix.solve(x, closely),
       stepped: (delta, s) => potential.elastic.predictPressure(delta, s),
     };
     const report = minimise(
@@ -279,17 +275,12 @@ export class Simulation {
       potential.loads.dead(potential.dead, 0, share);
       potential.loads.wind(potential.dead, c, this.velocity, share);
       potential.ground?.lag(c, 0);
-      let first = true;
       const before = c.slice();
       const problem: NewtonProblem = {
         evaluate: (pose, gradient) => potential.gradient(pose, gradient),
         worstJ: () => potential.elastic.worstJ(),
-        refresh: (definite) => {
-          const ok = this.matrix.refresh(c, { stiffness: 1, mass: 0 }, definite, first);
-          first = false;
-          return ok;
-        },
-        solve: (x) => this.matrix.solve(x),
+        refresh: (definite, predicted) => this.matrix.refresh(c, { stiffness: 1, mass: 0 }, definite, predicted),
+        solve: (x, closely) => this.matrix.solve(x, closely),
         stepped: (delta, s) => potential.elastic.predictPressure(delta, s),
       };
       const report = minimise(problem, c, r, {

@@ -41,10 +41,10 @@ export class SystemMatrix {
   }
 
   /**
-   * Factors the matrix at c, the pose last evaluated. The geometric term keeps the pressure that the last Newton step
-   * predicted, unless this is the `first` factor of a step. False: not positive definite.
+   * Factors the matrix at c, the pose last evaluated. The geometric term takes the pressure that the last Newton step
+   * predicted, when it was `predicted`. False: not positive definite.
    */
-  refresh(c: Float64Array, weights: Weights, definite: boolean, first: boolean): boolean {
+  refresh(c: Float64Array, weights: Weights, definite: boolean, predicted: boolean): boolean {
     const { potential, bound, K, constant } = this;
     const { stiffness, mass } = weights;
     if (this.constantFor?.stiffness !== stiffness || this.constantFor.mass !== mass) {
@@ -53,7 +53,7 @@ export class SystemMatrix {
       if (mass > 0) potential.addMass(constant, mass);
       this.constantFor = { stiffness, mass };
     }
-    if (first) potential.elastic.resetPressure();
+    if (!predicted) potential.elastic.resetPressure();
     for (const single of [true, false]) {
       K.set(constant);
       potential.addVarying(K, c, stiffness, definite, single);
@@ -63,10 +63,11 @@ export class SystemMatrix {
     return false;
   }
 
-  /** Solves in place with the factor last made. */
-  solve(x: Float64Array): void {
+  /** Solves in place with the factor last made; not `closely`: as well as that factor does it. */
+  solve(x: Float64Array, closely: boolean): void {
     const { bound, K } = this;
     if (!this.single) return bound.solve(K, x);
+    if (!closely) return bound.solveSingle(x);
     conjugateGradient(
       { apply: (out, p) => bound.multiply(out, K, p), precondition: (z) => bound.solveSingle(z) },
       x,

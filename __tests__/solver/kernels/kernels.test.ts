@@ -73,6 +73,8 @@ function runAll(kernels: Kernels, index: number) {
   });
   const outer = bound.allocate(length);
   bound.addOuter(outer, D, Float64Array.from(FACTORS.slice(0, groups)), member);
+  const outerSingle = bound.allocate(length);
+  bound.addOuterSingle(outerSingle, D, Float64Array.from(FACTORS.slice(0, groups)), member);
   // Laplacian and outer products are semi-definite; a firm diagonal makes a matrix that Cholesky must accept.
   const K = bound.allocate(length);
   for (let e = 0; e < length; e++) K[e] = Math.abs(factors[0]!) * outer[e]!;
@@ -102,6 +104,7 @@ function runAll(kernels: Kernels, index: number) {
     assembled: fullMatrix(assembled, pattern),
     laplace: fullMatrix(laplace, pattern),
     outer: fullMatrix(outer, pattern),
+    outerSingle: fullMatrix(outerSingle, pattern),
   }; // prettier-ignore
 }
 
@@ -216,6 +219,7 @@ describe.each(systems.map((system, index) => [system.name, index] as const))('%s
   test('single precision is close to double', () => {
     const wasm = runAll(wasmKernels()!, index);
     expect(difference(flat(wasm.assembledSingle), flat(plain.assembled))).toBeLessThan(2e-6);
+    expect(difference(flat(wasm.outerSingle), flat(plain.outer))).toBeLessThan(2e-6);
     expect(wasm.single.definite).toBe(true);
     for (const { before, single } of [wasm, plain]) {
       const product = before.map((row) => row.reduce((sum, value, v) => sum + value * single.x[v]!, 0));
@@ -252,6 +256,40 @@ describe.each([plainKernels, wasmKernels()!].map((kernels) => [kernels.name, ker
     const twice = [runAll(kernels, 3), runAll(kernels, 3)];
     expect(twice[1]).toEqual(twice[0]);
   });
+});
+
+test('a constant form acts on each component alike, in both twins', () => {
+  const { points, pattern, unknowns, random } = make(1);
+  const pairs = { rows: Int32Array.of(0, 3, 3), columns: Int32Array.of(0, 1, 3) };
+  const values = Float64Array.from({ length: 300 }, random);
+  // The blocks of a part with itself are symmetric.
+  for (const p of [0, 2]) {
+    for (let a = 0; a < 10; a++) for (let b = 0; b < a; b++) values[p * 100 + 10 * b + a] = values[p * 100 + 10 * a + b]!;
+  } // prettier-ignore
+  const x = Float64Array.from({ length: unknowns }, random);
+  const start = Float64Array.from({ length: unknowns }, random);
+  const expected = start.slice();
+  const at = (part: number, i: number, a: number) => (part * 3 + i) * 10 + a;
+  for (let p = 0; p < 3; p++) {
+    const [r, c] = [pairs.rows[p]!, pairs.columns[p]!];
+    for (let i = 0; i < 3; i++) {
+      for (let a = 0; a < 10; a++) {
+        for (let b = 0; b < 10; b++) {
+          const value = 0.3 * values[p * 100 + 10 * a + b]!;
+          expected[at(r, i, a)]! += value * x[at(c, i, b)]!;
+          if (r !== c) expected[at(c, i, b)]! += value * x[at(r, i, a)]!;
+        }
+      }
+    }
+  }
+  for (const kernels of [plainKernels, wasmKernels()!]) {
+    const out = start.slice();
+    kernels
+      .bind(points, pattern, 10)
+      .bindForm({ ...pairs, values })
+      .apply(out, x, 0.3);
+    expect(difference(out, expected)).toBeLessThan(1e-13);
+  }
 });
 
 test('the WebAssembly twin is preferred, and refuses arrays that are not its own', () => {

@@ -2,7 +2,7 @@
 // solver/kernels/plain*.ts, two doubles at a time; pointers are byte offsets into the imported memory.
 
 // @ts-nocheck
-export { assembleSingle, factorSingle, solveSingle } from './single';
+export { addOuterSingle, assembleSingle, factorSingle, solveSingle } from './single';
 
 const D: usize = 8;
 
@@ -690,6 +690,47 @@ export function multiplyBlocks(
         }
         const to = y + other + i;
         store<f64>(to, load<f64>(to) + (f64x2.extract_lane(s, 0) + f64x2.extract_lane(s, 1)));
+      }
+    }
+  }
+}
+
+// out += factor · A x on each component, A symmetric in blocks of basis × basis for pairs of parts.
+export function applyForm(
+  out: usize,
+  pairs: i32,
+  rows: usize,
+  columns: usize,
+  values: usize,
+  basis: i32,
+  x: usize,
+  factor: f64,
+): void {
+  const bytes = <usize>basis * D;
+  let block = values;
+  for (let p = 0; p < pairs; p++, block += bytes * <usize>basis) {
+    const r = <usize>(i32At(rows, p) * 3) * bytes;
+    const c = <usize>(i32At(columns, p) * 3) * bytes;
+    for (let i: usize = 0; i < 3 * bytes; i += bytes) {
+      const xr = x + r + i;
+      const xc = x + c + i;
+      const yr = out + r + i;
+      const yc = out + c + i;
+      for (let a: usize = 0; a < bytes; a += D) {
+        const row = block + (a >> 3) * bytes;
+        let s = f64x2.splat(0);
+        if (r == c) {
+          for (let b: usize = 0; b < bytes; b += 16) s = f64x2.add(s, f64x2.mul(v128.load(row + b), v128.load(xc + b)));
+        } else {
+          const v = f64x2.splat(factor * load<f64>(xr + a));
+          for (let b: usize = 0; b < bytes; b += 16) {
+            const m = v128.load(row + b);
+            s = f64x2.add(s, f64x2.mul(m, v128.load(xc + b)));
+            v128.store(yc + b, f64x2.add(v128.load(yc + b), f64x2.mul(v, m)));
+          }
+        }
+        const sum = f64x2.extract_lane(s, 0) + f64x2.extract_lane(s, 1);
+        store<f64>(yr + a, load<f64>(yr + a) + factor * sum);
       }
     }
   }

@@ -482,3 +482,99 @@ export function solveSingle(
     }
   }
 }
+
+// K += Σ_g factors[g] Σ_m D_gm D_gmᵀ as in addOuter, factors not negative. `kept`: the vectors as floats, each part's
+// together: [part position][group][4][wide]. `tile`: wide × wide floats. `list`: room for one int a group.
+export function addOuterSingle(
+  K: usize,
+  vectors: usize,
+  count: i32,
+  factors: usize,
+  member: usize,
+  kept: usize,
+  tile: usize,
+  list: usize,
+  partCount: i32,
+  size: i32,
+  wide: i32,
+  columnStart: usize,
+  rows: usize,
+  partAt: usize,
+): void {
+  const bytes = <usize>wide * S;
+  const length = <usize>(partCount * size) * D;
+  const own = <usize>(4 * count) * bytes;
+  for (let p = 0; p < partCount; p++) {
+    const part = i32At(partAt, p);
+    for (let v = 0; v < 4 * count; v++) {
+      const root = Math.sqrt(load<f64>(factors + <usize>(v >> 2) * D));
+      const from = vectors + <usize>v * length + <usize>(part * size) * D;
+      const to = kept + <usize>p * own + <usize>v * bytes;
+      for (let u = 0; u < size; u++) store<f32>(to + <usize>u * S, <f32>(root * load<f64>(from + <usize>u * D)));
+      for (let u = size; u < wide; u++) store<f32>(to + <usize>u * S, 0);
+    }
+  }
+  for (let column = 0; column < partCount; column++) {
+    const b = <usize>i32At(partAt, column);
+    const B = kept + <usize>column * own;
+    const end = i32At(columnStart, column + 1);
+    for (let e = i32At(columnStart, column); e < end; e++) {
+      const r = i32At(rows, e);
+      const a = <usize>i32At(partAt, r);
+      const A = kept + <usize>r * own;
+      let n = 0;
+      for (let g = 0; g < count; g++) {
+        const places = member + <usize>(g * partCount);
+        if (!load<u8>(places + a) || !load<u8>(places + b)) continue;
+        store<i32>(list + ((<usize>n) << 2), 4 * g * <i32>bytes);
+        n++;
+      }
+      if (n == 0) continue;
+      for (let i: usize = 0; i < bytes; i += 16) {
+        for (let j: usize = 0; j < bytes; j += 32) {
+          let s00 = f32x4.splat(0), s01 = f32x4.splat(0), s10 = f32x4.splat(0), s11 = f32x4.splat(0); // prettier-ignore
+          let s20 = f32x4.splat(0), s21 = f32x4.splat(0), s30 = f32x4.splat(0), s31 = f32x4.splat(0); // prettier-ignore
+          for (let l = 0; l < n; l++) {
+            const at = <usize>i32At(list, l);
+            let p = A + at + i;
+            let q = B + at + j;
+            for (let m = 0; m < 4; m++, p += bytes, q += bytes) {
+              const y0 = v128.load(q);
+              const y1 = v128.load(q, 16);
+              let x = v128.load32_splat(p);
+              s00 = f32x4.add(s00, f32x4.mul(x, y0));
+              s01 = f32x4.add(s01, f32x4.mul(x, y1));
+              x = v128.load32_splat(p, 4);
+              s10 = f32x4.add(s10, f32x4.mul(x, y0));
+              s11 = f32x4.add(s11, f32x4.mul(x, y1));
+              x = v128.load32_splat(p, 8);
+              s20 = f32x4.add(s20, f32x4.mul(x, y0));
+              s21 = f32x4.add(s21, f32x4.mul(x, y1));
+              x = v128.load32_splat(p, 12);
+              s30 = f32x4.add(s30, f32x4.mul(x, y0));
+              s31 = f32x4.add(s31, f32x4.mul(x, y1));
+            }
+          }
+          const c = tile + (i >> 2) * bytes + j;
+          v128.store(c, s00);
+          v128.store(c, s01, 16);
+          v128.store(c + bytes, s10);
+          v128.store(c + bytes, s11, 16);
+          v128.store(c + 2 * bytes, s20);
+          v128.store(c + 2 * bytes, s21, 16);
+          v128.store(c + 3 * bytes, s30);
+          v128.store(c + 3 * bytes, s31, 16);
+        }
+      }
+      const block = K + <usize>(e * size * size) * D;
+      for (let i = 0; i < size; i++) {
+        const to = block + <usize>(i * size) * D;
+        const from = tile + <usize>i * bytes;
+        for (let j = 0; j < size; j += 2) {
+          const t = to + <usize>j * D;
+          v128.store(t, f64x2.add(v128.load(t), f64x2.promote_low_f32x4(v128.load64_zero(from + <usize>j * S))));
+        }
+      }
+    }
+  }
+}
