@@ -66,13 +66,13 @@ function ModelPage({ model, patches, fault }: { model: Model; patches: Patch[] |
     () => (items ? defaultDocument(model, sceneName, items) : null),
     [model, sceneName, items],
   );
-  // The body is set up while its report is read, so that the first look moves at once.
+  // Once its size is settled the body is set up while its report is read, so that the first look moves at once.
   useEffect(
     () =>
-      maySetUp && metric && firstScene
+      maySetUp && model.unitConfirmed && metric && firstScene
         ? prepareAhead({ body: bodyName(firstScene), scene: firstScene, patches: metric })
         : undefined,
-    [maySetUp, metric, firstScene],
+    [maySetUp, model.unitConfirmed, metric, firstScene],
   );
   const change = useMutation({
     mutationFn: (body: ModelChange) => api.patch(`/api/models/${model.id}`, body, modelSchema),
