@@ -46,7 +46,7 @@ module.exports = {
       comment: 'The application knows the public surface of the solver, nothing behind it.',
       severity: 'error',
       from: { path: '^(components|app)/' },
-      to: { path: '^solver/', pathNot: '^solver/(index\\.ts|worker/solver\\.worker\\.ts)$' },
+      to: { path: '^solver/', pathNot: '^solver/(index\\.ts|worker/solver\\.worker\\.ts|cases/check\\.worker\\.ts)$' },
     },
     {
       name: 'web-and-server-apart',

@@ -34,7 +34,11 @@ module.exports = {
       preset: 'jest-expo/web',
       testMatch: ['<rootDir>/__tests__/components/**/*.web.test.{ts,tsx}'],
       transformIgnorePatterns: [transpiled],
-      moduleNameMapper: assets,
+      // These packages offer Jest an .mjs, which the preset does not transform.
+      moduleNameMapper: {
+        ...assets,
+        '^(d3-(array|color|format|interpolate|path|time|time-format))$': '<rootDir>/node_modules/$1/dist/$1.js',
+      },
       modulePathIgnorePatterns: ['<rootDir>/.data', '<rootDir>/dist', '<rootDir>/dist-server'],
     },
     {

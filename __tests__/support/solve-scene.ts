@@ -8,6 +8,8 @@ import {
   type Scene,
 } from '../../solver/index';
 
+export { affineCoefficients } from '../../solver/cases/affine-patch/affine';
+
 /** Prepares a scene of built-in shapes. */
 export function prepareScene(scene: Scene): Prepared {
   if (scene.geometry.kind !== 'shapes') throw new Error('This helper takes built-in shapes.');
@@ -46,21 +48,4 @@ export function cube(change: Partial<Scene> = {}, material: Partial<Scene['mater
     time: { kind: 'motion', framesPerSecond: 24, frames: 12, substeps: 1, method: 'backward-euler' },
     ...change,
   };
-}
-
-/** Coefficients of the affine map x = A X + b. */
-export function affineCoefficients({ parts }: Prepared, A: readonly number[], b: readonly number[]): Float64Array {
-  const { count, basis, centres, scales } = parts;
-  const c = new Float64Array(3 * count * basis);
-  for (let part = 0; part < count; part++) {
-    for (let i = 0; i < 3; i++) {
-      const at = (part * 3 + i) * basis;
-      c[at] = b[i]!;
-      for (let d = 0; d < 3; d++) {
-        c[at]! += A[3 * i + d]! * centres[3 * part + d]!;
-        c[at + 1 + d] = A[3 * i + d]! * scales[part]!;
-      }
-    }
-  }
-  return c;
 }

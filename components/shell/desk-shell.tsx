@@ -12,12 +12,13 @@ import { AccountSheet } from './account-sheet';
 import { Crumbs } from './crumbs';
 import { OfflineLine } from './offline-line';
 
-const PLACES: { label: string; href: Href; at: string }[] = [
+const PLACES: { label: string; short?: string; href: Href; at: string }[] = [
   { label: 'Today', href: '/today', at: '/today' },
   { label: 'Models', href: '/models', at: '/models' },
   { label: 'Scenes', href: '/scenes', at: '/scenes' },
   { label: 'Runs', href: '/runs', at: '/runs' },
   { label: 'Materials', href: '/materials', at: '/materials' },
+  { label: 'Proof sheet', short: 'Proof', href: '/proof', at: '/proof' },
 ];
 
 /** Screens that fill the phone themselves and bring their own bottom row. */
@@ -113,13 +114,14 @@ function Places({ path }: { path: string }) {
             onPress={() => router.push(place.href)}
             style={[
               styles.place,
+              !wide && styles.narrow,
               wide
                 ? { borderBottomColor: here ? colors.kelp : 'transparent' }
                 : { borderTopColor: here ? colors.kelp : 'transparent' },
             ]}
           >
             <Text variant={here ? 'button' : 'body'} color={here ? 'ink' : 'ink2'} numberOfLines={1}>
-              {place.label}
+              {wide ? place.label : (place.short ?? place.label)}
             </Text>
           </Pressable>
         );
@@ -147,6 +149,7 @@ const styles = StyleSheet.create({
     borderBottomWidth: 3,
     borderColor: 'transparent',
   },
+  narrow: { paddingHorizontal: space.xs },
   underlined: { textDecorationLine: 'underline' },
   bottom: { height: 60, borderTopWidth: 1, flexDirection: 'row' },
 });

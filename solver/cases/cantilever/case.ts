@@ -2,8 +2,8 @@ import type { Kernels } from '../../kernels/kernels';
 import { compare, meanGauge, simulateCase, type CaseRow, type PublishedCase } from '../published-case';
 import { cantilever, END_LOAD, type CantileverOptions } from './scene';
 
-const BEAM = 'S. Timoshenko, Strength of Materials I, 3rd ed. (1955), ch. 5';
-const SOLID = 'converged quadratic hexahedra 24 × 3 × 3';
+export const BEAM = 'S. Timoshenko, Strength of Materials I, 3rd ed. (1955), ch. 5';
+export const SOLID = 'converged quadratic hexahedra 24 × 3 × 3';
 
 /** Name, options, source, expected (m; end loads per newton) and bars at 6, 10 and 24 parts. */
 const CASES: readonly [string, Omit<CantileverOptions, 'parts'>, string, number, readonly [number, number, number]][] =

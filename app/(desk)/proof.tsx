@@ -1,0 +1,3 @@
+import { ProofScreen } from '../../components/proof/proof-screen';
+
+export default ProofScreen;
