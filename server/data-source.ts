@@ -4,6 +4,7 @@ import { PeopleAndProductions1796106000000 } from './migrations/1796106000000-pe
 import { Material } from './materials/material.entity';
 import { ModelsScenesAndRuns1796107000000 } from './migrations/1796107000000-models-scenes-and-runs';
 import { KeepWhatIsWritten1796107100000 } from './migrations/1796107100000-keep-what-is-written';
+import { PresetsOfAProduction1796124376054 } from './migrations/1796124376054-presets-of-a-production';
 import { ThingsOfOneProduction1796108800000 } from './migrations/1796108800000-things-of-one-production';
 import { Model } from './models/model.entity';
 import { SnakeNaming } from './naming';
@@ -41,6 +42,7 @@ const migrations = [
   ModelsScenesAndRuns1796107000000,
   KeepWhatIsWritten1796107100000,
   ThingsOfOneProduction1796108800000,
+  PresetsOfAProduction1796124376054,
 ];
 
 export function createDataSource(url: string): DataSource {

@@ -34,7 +34,7 @@ export function buildServices(config: Config, data: DataSource, reader = modelRe
   const memberships = new MembershipsService(data);
   const productions = new ProductionsService(data, memberships);
   const models = new ModelsService(data, memberships, audit, reader);
-  const materials = new MaterialsService(data, memberships);
+  const materials = new MaterialsService(data, memberships, audit);
   const scenes = new ScenesService(data, memberships, models, materials, audit);
   const runs = new RunsService(data, new RunViews(data), memberships, productions, scenes, audit);
   return {

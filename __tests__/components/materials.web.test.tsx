@@ -17,6 +17,7 @@ const preset = (name: string, family: string, youngsModulus: number): MaterialPr
   density: 1010,
   source: 'invented for this test',
   status: 'from memory',
+  productionId: null,
 });
 const ALL = [preset('Oak', 'wood and paper', 1e10), preset('Agar', 'gel', 4e4), preset('Jelly', 'gel', 1250)];
 

@@ -1,9 +1,19 @@
 import { type Desk, openDesk, PEOPLE, type PersonKey } from './support/desk';
 import { routesOf } from './support/routes';
-import { aDocument, aRun, aRunRequest, aScene, sendParts, sha256, someBytes, someTraces } from './support/things';
+import {
+  aDocument,
+  aPreset,
+  aRun,
+  aRunRequest,
+  aScene,
+  sendParts,
+  sha256,
+  someBytes,
+  someTraces,
+} from './support/things';
 
 type Method = 'get' | 'post' | 'put' | 'patch' | 'delete';
-type Least = 'artist' | 'technicalDirector' | 'administrator';
+type Least = 'artist' | 'technicalDirector' | 'lead' | 'administrator';
 
 interface Case {
   route: string;
@@ -27,11 +37,12 @@ const OPEN = [
 const ALLOWED: Record<Least, PersonKey[]> = {
   artist: ['artist', 'technicalDirector', 'lead', 'administrator'],
   technicalDirector: ['technicalDirector', 'lead', 'administrator'],
+  lead: ['lead', 'administrator'],
   administrator: ['administrator'],
 };
 
 let desk: Desk;
-const ids = { scene: '', revision: '', model: '', run: '', complete: '' };
+const ids = { scene: '', revision: '', model: '', run: '', complete: '', material: '' };
 
 beforeAll(async () => {
   desk = await openDesk();
@@ -44,6 +55,7 @@ beforeAll(async () => {
   });
   ids.complete = await aRun(desk, 30, scene);
   await sendParts(desk, ids.complete);
+  ids.material = (await desk.services.materials.publish(desk.people.lead, desk.fair, aPreset())).id;
   await desk.services.runs.complete(desk.people.technicalDirector, ids.complete, someTraces(30));
 });
 afterAll(() => desk?.close());
@@ -66,6 +78,21 @@ const CASES: Case[] = [
   inFair('members'),
   inFair('models'),
   inFair('materials'),
+  {
+    route: 'POST /api/productions/:productionId/materials',
+    least: 'lead',
+    path: () => `/api/productions/${desk.fair}/materials`,
+    body: aPreset,
+    status: 201,
+  },
+  // Based on a version there is not, so that a permitted one is refused with 409 every time.
+  {
+    route: 'POST /api/materials/:materialId/versions',
+    least: 'lead',
+    path: () => `/api/materials/${ids.material}/versions`,
+    body: () => ({ ...aPreset(), basedOn: 99 }),
+    status: 409,
+  },
   inFair('scenes'),
   inFair('runs'),
   // Without a file a permitted upload is refused with 400: good enough to see who gets that far.

@@ -1,5 +1,17 @@
-import { Check, Column, CreateDateColumn, Entity, PrimaryColumn } from 'typeorm';
+import {
+  Check,
+  Column,
+  CreateDateColumn,
+  Entity,
+  Index,
+  JoinColumn,
+  ManyToOne,
+  PrimaryColumn,
+  type Relation,
+} from 'typeorm';
 import type { MaterialPreset } from '../../shared/wire/materials';
+import { Person } from '../people/person.entity';
+import { Production } from '../productions/production.entity';
 
 /** One version of a preset. A change is a new version; a run keeps the one it used. */
 @Entity('material')
@@ -14,6 +26,8 @@ import type { MaterialPreset } from '../../shared/wire/materials';
   'material_range_ordered',
   '(youngs_modulus_low IS NULL) = (youngs_modulus_high IS NULL) AND (youngs_modulus_low IS NULL OR (youngs_modulus_low > 0 AND youngs_modulus_low <= youngs_modulus_high))',
 )
+@Index('material_of_production', ['productionId', 'name', 'id'])
+@Check('material_published_by_someone', '(production_id IS NULL) = (created_by_id IS NULL)')
 export class Material {
   @PrimaryColumn({ type: 'uuid', primaryKeyConstraintName: 'material_pk' })
   id!: string;
@@ -56,4 +70,19 @@ export class Material {
 
   @CreateDateColumn({ type: 'timestamptz', precision: 3 })
   createdAt!: Date;
+
+  /** The production that published it; null for the studio's own presets. */
+  @Column({ type: 'uuid', nullable: true })
+  productionId!: string | null;
+
+  @Column({ type: 'uuid', nullable: true })
+  createdById!: string | null;
+
+  @ManyToOne(() => Production, { nullable: true, onDelete: 'RESTRICT' })
+  @JoinColumn({ name: 'production_id', foreignKeyConstraintName: 'material_production' })
+  production!: Relation<Production> | null;
+
+  @ManyToOne(() => Person, { nullable: true, onDelete: 'RESTRICT' })
+  @JoinColumn({ name: 'created_by_id', foreignKeyConstraintName: 'material_created_by' })
+  createdBy!: Relation<Person> | null;
 }

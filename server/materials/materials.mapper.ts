@@ -15,5 +15,6 @@ export function materialWire(material: Material): MaterialPreset {
     density: material.density,
     source: material.source,
     status: material.status,
+    productionId: material.productionId,
   };
 }

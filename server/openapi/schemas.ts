@@ -1,7 +1,12 @@
 import { z } from 'zod';
 import { auditListSchema } from '../../shared/wire/audit';
 import { liveSchema, readySchema } from '../../shared/wire/health';
-import { materialListSchema } from '../../shared/wire/materials';
+import {
+  materialListSchema,
+  materialPresetSchema,
+  presetCreateSchema,
+  presetVersionSchema,
+} from '../../shared/wire/materials';
 import { modelChangeSchema, modelListSchema, modelPatchesSchema, modelSchema } from '../../shared/wire/models';
 import { problemSchema } from '../../shared/wire/problem';
 import { memberListSchema, productionListSchema } from '../../shared/wire/productions';
@@ -22,6 +27,7 @@ const ANSWERS = {
   AuditList: auditListSchema,
   Live: liveSchema,
   MaterialList: materialListSchema,
+  MaterialPreset: materialPresetSchema,
   MemberList: memberListSchema,
   Model: modelSchema,
   ModelList: modelListSchema,
@@ -43,6 +49,8 @@ const ANSWERS = {
 /** What it takes: defaults may be left out here. */
 const REQUESTS = {
   ModelChangeRequest: modelChangeSchema,
+  PresetRequest: presetCreateSchema,
+  PresetVersionRequest: presetVersionSchema,
   RevisionRequest: revisionCreateSchema,
   RunCompleteRequest: runCompleteSchema,
   RunRequest: runCreateSchema,

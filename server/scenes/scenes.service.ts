@@ -34,7 +34,7 @@ export class ScenesService {
   ): Promise<SceneWithLatest> {
     await this.memberships.require(actor, productionId, 'technical-director');
     const model = await this.modelFor(productionId, wanted.document);
-    await this.check(wanted.document, model);
+    await this.check(productionId, wanted.document, model);
     const id = await this.data.transaction(async (manager) => {
       const scene = manager.create(Scene, {
         productionId,
@@ -100,7 +100,7 @@ export class ScenesService {
   ): Promise<SceneRevision> {
     const { productionId, model } = await this.get(actor, sceneId);
     await this.memberships.require(actor, productionId, 'technical-director', 'scene');
-    await this.check(wanted.document, model);
+    await this.check(productionId, wanted.document, model);
     const id = await this.data.transaction(async (manager) => {
       // The lock makes the second of two saves wait, and then see that it is not based on the newest.
       const { latestNumber } = await manager.findOneOrFail(Scene, {
@@ -134,10 +134,10 @@ export class ScenesService {
     ]);
   }
 
-  private async check(document: SceneDocument, model: DocumentModel): Promise<void> {
+  private async check(productionId: string, document: SceneDocument, model: DocumentModel): Promise<void> {
     const faults = faultsAgainstModel(document, model);
     for (const [index, { preset }] of document.materials.entries()) {
-      if (preset && !(await this.materials.exists(preset))) faults.push(unknownPreset(index));
+      if (preset && !(await this.materials.exists(preset, productionId))) faults.push(unknownPreset(index));
     }
     if (faults.length > 0)
       throw new InvalidRequest('The scene does not fit. Mend what is marked and save again.', faults);

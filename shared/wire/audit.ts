@@ -13,6 +13,7 @@ export const AUDIT_KINDS = [
   'run-started',
   'run-completed',
   'run-deleted',
+  'material-published',
 ] as const;
 export type AuditKind = (typeof AUDIT_KINDS)[number];
 

@@ -1,3 +1,4 @@
+import type { PresetCreate } from '../../../shared/wire/materials';
 import { createHash } from 'node:crypto';
 import { gzipSync } from 'node:zlib';
 import { Model } from '../../../server/models/model.entity';
@@ -127,3 +128,16 @@ export async function sendParts(desk: Desk, runId: string, frames = 30): Promise
   const recipe = someBytes(99);
   await desk.services.runParts.putRecipe(actor, runId, { bytes: recipe, sha256: sha256(recipe) });
 }
+
+/** A preset that a lead may publish. */
+export const aPreset = (): PresetCreate => ({
+  name: 'Strap rubber',
+  family: 'rubber',
+  law: 'stable-neo-hookean',
+  youngsModulus: 1.2e6,
+  youngsModulusRange: [1e6, 1.4e6],
+  poissonsRatio: 0.49,
+  density: 1100,
+  source: 'invented for this test',
+  status: 'measured by the production',
+});
