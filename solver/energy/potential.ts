@@ -9,6 +9,7 @@ import { ElasticEnergy } from './elastic';
 import { Loads } from './loads';
 import { subtractRows } from './rows';
 import { carry, carryShare, penaltyStiffness, placeSupports, type PlacedSupport } from './supports';
+import { cubeRoot } from '../math/elementary';
 
 /** Weight of the stabilisation: silent on global quadratics; ten times more stiffens coarse models by .7–1 %. */
 const STABILISATION = 1e-5;
@@ -126,7 +127,7 @@ export class PotentialEnergy {
           scene.up === 'y' ? 1 : 2,
           Float64Array.from({ length: samples.count }, (_, s) => {
             const body = bodies[samples.body[s]!]!;
-            return (CONTACT_FACTOR * young[samples.body[s]!]!) / Math.cbrt(body.volume);
+            return (CONTACT_FACTOR * young[samples.body[s]!]!) / cubeRoot(body.volume);
           }),
           delta,
         )

@@ -3,6 +3,7 @@ import { samplesInRegion } from '../quadrature/regions';
 import type { Scene, SceneSupport, Vec3 } from '../scene';
 import { pickRows } from './rows';
 import type { Constraint } from './constraints';
+import { cubeRoot } from '../math/elementary';
 
 /** Penalty of supports and ties over E/ℓ: 100 hides stiffness error behind compliance, 10⁴ stiffens by .2–.9 %. */
 export const SUPPORT_FACTOR = 1000;
@@ -57,7 +58,7 @@ export function placeSupports(prepared: Prepared, scene: Scene): PlacedSupport[]
 
 /** β E/ℓ, Pa/m, with ℓ the cube root of the body's volume. */
 export const penaltyStiffness = (youngsModulus: number, volume: number) =>
-  (SUPPORT_FACTOR * youngsModulus) / Math.cbrt(volume);
+  (SUPPORT_FACTOR * youngsModulus) / cubeRoot(volume);
 
 /** Moves the targets to where the support is at `time` (s); linear between keys, held outside their range. */
 export function carry(placed: PlacedSupport, time: number): void {

@@ -1,3 +1,4 @@
+import { naturalLog } from '../math/elementary';
 import type { Law } from './law';
 
 /**
@@ -16,7 +17,7 @@ export const neoHookeanA: Law = {
       out[2] = 0;
       return;
     }
-    const log = Math.log(J);
+    const log = naturalLog(J);
     out[0] = -mu * log + (lambda / 2) * log * log;
     out[1] = (lambda * log - mu) / J;
     out[2] = (lambda + mu - lambda * log) / (J * J);

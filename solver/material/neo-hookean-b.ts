@@ -1,3 +1,4 @@
+import { naturalLog } from '../math/elementary';
 import type { Law } from './law';
 
 /**
@@ -17,7 +18,7 @@ export const neoHookeanB: Law = {
       return;
     }
     const e = J - 1;
-    out[0] = -mu * Math.log(J) + (lambda / 2) * e * e;
+    out[0] = -mu * naturalLog(J) + (lambda / 2) * e * e;
     out[1] = lambda * e - mu / J;
     out[2] = lambda + mu / (J * J);
   },

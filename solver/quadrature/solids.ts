@@ -7,6 +7,7 @@ import type { Piece } from './pieces';
 import { overlapOrder } from './precedence';
 import { areaOf, type TriangleSoup } from './rays/soup';
 import { isSheet, sheetPoints } from './sheets';
+import { cubeRoot } from '../math/elementary';
 
 /** A piece with its inside, its share of the parts and its fine points. */
 export interface Solid {
@@ -62,7 +63,7 @@ export function findSolids(
   const counts = splitParts(
     scene.parts.count,
     kept.map(({ piece, inside, sheet }) => ({
-      size: sheet ? areaOf(soup, piece.triangles) / 4 : Math.cbrt(inside.volume) ** 2,
+      size: sheet ? areaOf(soup, piece.triangles) / 4 : cubeRoot(inside.volume) ** 2,
       youngsModulus: scene.materials[piece.material]!.youngsModulus,
     })),
   );
@@ -71,7 +72,7 @@ export function findSolids(
     const voxels = Math.max(VOXELS.leastPerBody, VOXELS.perPart * partCount);
     const fine = sheet
       ? sheetPoints(facing, piece, thickness, voxels)
-      : finePointsOf(insideMoments(inside, piece, Math.cbrt(inside.volume / voxels), LEAST_ACROSS));
+      : finePointsOf(insideMoments(inside, piece, cubeRoot(inside.volume / voxels), LEAST_ACROSS));
     return { piece, inside, sheet, partCount, fine };
   });
   return { solids, lost };

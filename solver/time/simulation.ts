@@ -11,6 +11,7 @@ import type { Scene, Vec3 } from '../scene';
 import { SolverStopped } from './solver-stopped';
 import { SystemMatrix } from './system-matrix';
 import { systemPattern } from './system-pattern';
+import { cubeRoot } from '../math/elementary';
 
 /** Dissipation of the Hilber–Hughes–Taylor method (Hilber, Hughes and Taylor 1977), 0 … 1/3. */
 const HHT_ALPHA = 0.1;
@@ -127,7 +128,7 @@ export class Simulation {
       const body = bodies[samples.body[pull.sample]!]!;
       const young = this.scene.materials[body.material]!.youngsModulus;
       // As stiff as a support on a patch of a twentieth of the body's width: firm, but the body can resist.
-      const area = (Math.cbrt(body.volume) / 20) ** 2;
+      const area = (cubeRoot(body.volume) / 20) ** 2;
       this.potential.pull = {
         id: 'pull',
         rows: pickRows(samples.rows, [pull.sample]),

@@ -1,4 +1,5 @@
 import type { TriangleSoup } from './soup';
+import { angleOf } from '../../math/elementary';
 
 /**
  * Generalised winding number (Jacobson, Kavan, Sorkine-Hornung 2013) by a tree of dipoles (Barill,
@@ -134,7 +135,7 @@ function solidAngleHalf(c: Float64Array, o: number, x: number, y: number, z: num
     (ax * bx + ay * by + az * bz) * d +
     (bx * cx + by * cy + bz * cz) * a +
     (cx * ax + cy * ay + cz * az) * b;
-  return volume === 0 ? 0 : Math.atan2(volume, denominator);
+  return volume === 0 ? 0 : angleOf(volume, denominator);
 }
 
 /** Fills one node's far-field terms from its triangles ([triangle][7] area, area normal, centroid). */
