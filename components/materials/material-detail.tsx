@@ -6,11 +6,22 @@ import { RADIUS } from '../theme/tokens';
 import { useTheme } from '../theme/use-theme';
 import { Dimension } from '../ui/dimension';
 import { Fact } from '../ui/fact';
+import { Button } from '../ui/button';
 import { Caution } from '../ui/states';
 import { Text } from '../ui/text';
+import type { PresetStart } from './preset-form';
 
 /** One preset: its numbers, how far they may be off, and where they come from. */
-export function MaterialDetail({ material, titled = true }: { material: MaterialPreset; titled?: boolean }) {
+export function MaterialDetail({
+  material,
+  titled = true,
+  onMake,
+}: {
+  material: MaterialPreset;
+  titled?: boolean;
+  /** starts a new preset or version from this one */
+  onMake?: (start: PresetStart) => void;
+}) {
   const { colors } = useTheme();
   const { youngsModulus: value, youngsModulusRange: range } = material;
   return (
@@ -22,7 +33,7 @@ export function MaterialDetail({ material, titled = true }: { material: Material
           </Text>
         ) : null}
         <Text variant="small" color="ink2">
-          {`version ${material.version}`}
+          {`${material.productionId ? 'ours, ' : ''}version ${material.version}`}
         </Text>
       </View>
       {range ? (
@@ -51,6 +62,27 @@ export function MaterialDetail({ material, titled = true }: { material: Material
           {sentence(material.status)}
         </Text>
       </View>
+      {onMake ? (
+        <View style={styles.actions}>
+          {material.productionId ? (
+            <Button
+              label="New version"
+              onPress={() =>
+                onMake({
+                  title: `Version ${material.version + 1} of ${material.name}`,
+                  values: material,
+                  next: material,
+                })
+              }
+            />
+          ) : null}
+          <Button
+            label="Copy"
+            hint="Publish a preset of the production that starts from this one"
+            onPress={() => onMake({ title: 'Publish a copy', values: { ...material, name: `${material.name}, ours` } })}
+          />
+        </View>
+      ) : null}
       <Caution />
     </View>
   );
@@ -62,6 +94,7 @@ function sentence(text: string): string {
 }
 
 const styles = StyleSheet.create({
+  actions: { flexDirection: 'row', gap: 8 },
   detail: { gap: 14 },
   head: { flexDirection: 'row', alignItems: 'baseline', justifyContent: 'space-between', gap: 12 },
   name: { flex: 1, minWidth: 0 },

@@ -12,7 +12,7 @@ import { Progress } from '../ui/progress';
 import { QueryState } from '../ui/query-state';
 import { Row } from '../ui/row';
 import { Empty, Fault } from '../ui/states';
-import { chooseFile, useFileDrop } from './choose-file';
+import { chooseFile, useFileDrop } from '../ui/choose-file';
 import { sizeText } from '../../shared/model-size';
 
 /** Models of the production, and the way to bring one in. */

@@ -44,7 +44,7 @@ export function Field(props: Props) {
   const [shown, setShown] = useState(false);
   const id = useId();
   return (
-    <View style={styles.field}>
+    <View style={[styles.field, multiline && styles.whole]}>
       <Text variant="strong" nativeID={id}>
         {label}
       </Text>
@@ -68,6 +68,7 @@ export function Field(props: Props) {
           onSubmitEditing={onSubmit}
           secureTextEntry={secret && !shown}
           multiline={multiline}
+          numberOfLines={multiline ? 4 : undefined}
           keyboardType={keyboard}
           autoComplete={autoComplete}
           autoCapitalize="none"
@@ -106,5 +107,7 @@ const styles = StyleSheet.create({
   },
   unit: { paddingRight: space.m },
   input: { flex: 1, minWidth: 0, minHeight: 46, paddingHorizontal: space.m, outlineWidth: 0 },
-  tall: { minHeight: 72, paddingTop: space.m },
+  tall: { minHeight: 112, paddingVertical: space.m },
+  // A tall field keeps its height in a column.
+  whole: { flexBasis: 'auto', flexShrink: 0 },
 });

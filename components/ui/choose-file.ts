@@ -1,13 +1,13 @@
 import { useEffect, useRef } from 'react';
 
 /** The browser's file dialogue; null when it was closed without a choice. */
-export function chooseFile(accept: string): Promise<File | null> {
+export function chooseFile(accept: string, label = 'Model file'): Promise<File | null> {
   return new Promise((resolve) => {
     const input = document.createElement('input');
     input.type = 'file';
     input.accept = accept;
     input.style.display = 'none';
-    input.setAttribute('aria-label', 'Model file');
+    input.setAttribute('aria-label', label);
     const finish = (file: File | null) => {
       input.remove();
       resolve(file);
