@@ -1,9 +1,11 @@
 import { fireEvent, render, screen } from '@testing-library/react';
 import { XyPlot } from '../../components/charts/xy-plot';
+import { convergenceCost } from '../../components/scenes/convergence-cost';
 import { ProofTable } from '../../components/proof/proof-table';
 import { errorText, hereText, passes, textbookText, verdict } from '../../components/proof/row-words';
 import type { CheckStates } from '../../components/proof/use-proof';
 import { estimateWords } from '../../components/solver-client/estimate-words';
+import type { SceneDocument } from '../../shared/scene-document';
 import type { CaseRow, ProofResult } from '../../solver/index';
 
 const row = (change: Partial<CaseRow>): CaseRow => ({
@@ -40,6 +42,18 @@ it('tells soft from stiff, and what was compared', () => {
   expect(estimateWords({ ...estimate, softer: -0.0029 }).answer).toBe('About 0.29 % stiff against finer parts');
   expect(estimateWords({ ...estimate, softer: 1e-4, apart: 1e-4 }).answer).toBe('The same with finer parts');
   expect(estimateWords({ ...estimate, time: 0.5 }).note).toContain('24 parts beside 60, at 0.5 s');
+});
+
+it('says before what a comparison costs: more for motion, more for more parts, from the speed measured here', () => {
+  const scene = (time: SceneDocument['time'], count = 24) =>
+    ({ time, parts: { count, order: 'quadratic' } }) as SceneDocument;
+  const motion = { kind: 'motion', framesPerSecond: 24, frames: 240, substeps: 1, method: 'backward-euler' } as const;
+  const here = { setUpSeconds: 0.5, partCount: 24, rate: null };
+  const rest = convergenceCost(scene({ kind: 'static', loadSteps: 1 }), here);
+  expect(convergenceCost(scene(motion), here)).toBeGreaterThan(rest);
+  expect(convergenceCost(scene(motion, 60), here)).toBeGreaterThan(convergenceCost(scene(motion), here));
+  // Two seconds are followed at most, each step twice as exact as a live one: 96 steps at 50 a second, and finer parts.
+  expect(convergenceCost(scene(motion), { ...here, setUpSeconds: 0, rate: 50 })).toBeCloseTo((96 / 50) * 5.7, 6);
 });
 
 it('lists the checks in every state, and the row beyond its bar is not called passed', () => {

@@ -7,7 +7,10 @@ import { Card } from '../ui/card';
 import { DimensionSlider } from '../ui/dimension-slider';
 import { Fact } from '../ui/fact';
 import { Text } from '../ui/text';
+import { convergenceCost } from './convergence-cost';
+import { ConvergenceReadout } from './convergence-readout';
 import type { Edit } from './edit';
+import type { Convergence } from './use-convergence';
 
 /** How many parts the body moves on, and what that costs. */
 export function PartsCard({
@@ -16,12 +19,14 @@ export function PartsCard({
   ready,
   rate,
   unit,
+  convergence,
 }: {
   document: SceneDocument;
   edit: Edit;
   ready: Ready | null;
   rate: number | null;
   unit: LengthUnit;
+  convergence: Convergence;
 }) {
   const now = ready?.partCount ?? document.parts.count;
   // Work per step grows about with the square of the part count (active sets stay, the factor fills).
@@ -44,6 +49,12 @@ export function PartsCard({
       {forecast !== null ? (
         <Fact name={`Forecast at ${document.parts.count} parts`} value={`about ${figures(forecast, 2)} steps/s`} />
       ) : null}
+      <ConvergenceReadout
+        convergence={convergence}
+        seconds={
+          ready && convergenceCost(document, { setUpSeconds: ready.report.seconds, partCount: ready.partCount, rate })
+        }
+      />
       <ChoiceOfFew
         label="Detail of a part"
         value={document.parts.order}

@@ -30,6 +30,7 @@ import { SaveSheet } from './save-sheet';
 import { stageMarks } from './stage-marks';
 import { TimeCard } from './time-card';
 import { useBake } from './use-bake';
+import { useConvergence } from './use-convergence';
 import { useHistory } from './use-history';
 import { useLive } from './use-live';
 
@@ -58,6 +59,7 @@ export function Workbench({ scene, revision: opened, patches, draft, moveAtOnce 
   const changed = document !== revision.document && JSON.stringify(document) !== JSON.stringify(revision.document);
   const bakeEvents = useRef<SolverEvents>({});
   const live = useLive(document, patches, document.up, bakeEvents, moveAtOnce);
+  const convergence = useConvergence(document, patches);
   const baking = useBake(scene.id, live.client, bakeEvents);
   const [card, setCard] = useState<(typeof CARDS)[number]>('Material');
   const [show, setShow] = useState<Show>('clay');
@@ -222,7 +224,9 @@ export function Workbench({ scene, revision: opened, patches, draft, moveAtOnce 
     </StageView>
   );
   const materialCard = <MaterialCard document={document} edit={edit} mass={ready?.mass ?? null} />;
-  const partsCard = <PartsCard document={document} edit={edit} ready={ready} rate={rate} unit={unit} />;
+  const partsCard = (
+    <PartsCard document={document} edit={edit} ready={ready} rate={rate} unit={unit} convergence={convergence} />
+  );
   const holdsCard = (
     <HoldsCard document={document} edit={edit} ready={ready} unit={unit} picking={picking} onPick={setPicking} />
   );

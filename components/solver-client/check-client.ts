@@ -50,7 +50,7 @@ function start<T>(
 export const computeProof = (check: ProofCheck, onProgress: (share: number) => void): CheckJob<ProofAnswer> =>
   start({ type: 'proof', check }, onProgress, (response) => (response.type === 'proof' ? response : null));
 
-/** Patches in metres. */
+/** Patches in the scene's unit, as the model has them. */
 export const computeEstimate = (
   scene: Scene,
   patches: Patch[],

@@ -1,4 +1,5 @@
 import type { Patch } from '../geometry/patch';
+import { scalePatch } from '../geometry/transform';
 import { bestKernels } from '../kernels/best-kernels';
 import type { Scene } from '../scene';
 import { estimateConvergence, type ConvergenceEstimate } from '../time/convergence';
@@ -12,7 +13,7 @@ import { runProofCheck, type ProofCheck } from './proof/run-check';
  */
 export type CheckRequest =
   | { type: 'proof'; check: ProofCheck }
-  /** Patches in metres. */
+  /** Patches in the scene's unit. */
   | { type: 'estimate'; scene: Scene; patches: Patch[] };
 
 export type CheckResponse =
@@ -40,7 +41,12 @@ scope.onmessage = ({ data }) => {
       const result = runProofCheck(data.check, kernels, onProgress);
       scope.postMessage({ type: 'proof', result, kernels: kernels.name, solverVersion: SOLVER_VERSION });
     } else {
-      const estimate = estimateConvergence(data.scene, data.patches, kernels, onProgress);
+      const estimate = estimateConvergence(
+        data.scene,
+        data.patches.map((patch) => scalePatch(patch, data.scene.unit)),
+        kernels,
+        onProgress,
+      );
       scope.postMessage({ type: 'estimate', estimate });
     }
   } catch (error) {

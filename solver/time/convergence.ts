@@ -5,6 +5,7 @@ import type { Prepared } from '../quadrature/prepared';
 import { evaluateRows } from '../quadrature/rows';
 import type { Scene } from '../scene';
 import { Simulation } from './simulation';
+import { SolverStopped } from './solver-stopped';
 
 /**
  * How many times as many parts the comparison takes, and the count beyond which it is content with fewer. At 1.6 times
@@ -70,12 +71,16 @@ export function estimateConvergence(
 
   const other = new Simulation(prepare(finer, patches), finer, kernels);
   onProgress(0.4);
-  if (finer.time.kind === 'static') other.solveStatic(finer.time.loadSteps);
-  else {
-    for (let step = 1; step <= pose.steps; step++) {
-      other.step({ exact: true });
-      onProgress(0.4 + (0.6 * step) / pose.steps);
+  try {
+    if (finer.time.kind === 'static') other.solveStatic(finer.time.loadSteps);
+    else {
+      for (let step = 1; step <= pose.steps; step++) {
+        other.step({ exact: true });
+        onProgress(0.4 + (0.6 * step) / pose.steps);
+      }
     }
+  } catch (error) {
+    throw error instanceof SolverStopped ? new SolverStopped(`With ${count} parts: ${error.message}`) : error;
   }
   const after = movement(other.prepared, finer)(other.coefficients);
   const size = norm(after, other.prepared);
