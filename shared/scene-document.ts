@@ -52,6 +52,11 @@ export const materialSchema = z.strictObject({
     .refine((x) => x >= 0, "Poisson's ratio cannot be negative here.")
     .refine((x) => x < 0.5, 'At 0.5 nothing can change volume. Use 0.49 or less.'),
   density: positive('The density'),
+  /** loss factor at 2 Hz: the share of stiffness that is viscous there */
+  loss: finite
+    .refine((x) => x >= 0, 'Loss cannot be negative: nothing gains energy by moving.')
+    .refine((x) => x <= 1, 'A loss factor above 1 is honey. Use 1 or less.')
+    .optional(),
   patches: z.array(z.int().min(0)).optional(),
   preset: z.strictObject({ id: z.string(), version: z.int().min(1) }).optional(),
 });
@@ -116,7 +121,7 @@ export const timeSchema = z.discriminatedUnion('kind', [
     framesPerSecond: finite.refine((x) => x >= 1 && x <= 240, 'Frames per second go from 1 to 240.').default(24),
     frames: z.int().min(1, 'Bake at least one frame.').max(MAX_FRAMES, `At most ${MAX_FRAMES} frames.`).default(240),
     substeps: z.int().min(1, 'At least one substep.').max(MAX_SUBSTEPS, `At most ${MAX_SUBSTEPS} substeps.`).default(3),
-    method: z.enum(['backward-euler', 'hht']).default('hht'),
+    method: z.enum(['backward-euler', 'bdf2', 'hht', 'tr-bdf2']).default('hht'),
   }),
 ]);
 

@@ -40,6 +40,8 @@ export interface SceneMaterial {
   /** Young's modulus at small strain, Pa, > 0. */
   youngsModulus: number;
   /** Poisson's ratio, 0 ≤ nu < 0.5. */
+  /** loss factor at `LOSS_HERTZ`, the share of stiffness that is viscous there; 0 when left out */
+  loss?: number | undefined;
   poissonsRatio: number;
   /** kg/m³, > 0. */
   density: number;
@@ -98,7 +100,7 @@ export interface SceneGauge {
   point: Vec3;
 }
 
-export type TimeMethod = 'backward-euler' | 'hht';
+export type TimeMethod = 'backward-euler' | 'bdf2' | 'hht' | 'tr-bdf2';
 
 export type SceneTime =
   | { kind: 'static'; loadSteps: number }

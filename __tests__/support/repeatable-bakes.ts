@@ -37,6 +37,14 @@ export const REPEATABLE: Record<string, Scene> = {
     gauges: [{ id: 'G1', name: 'Middle', point: [0.5, 0, 0] }],
     time: { kind: 'motion', framesPerSecond: 24, frames: 12, substeps: 1, method: 'hht' },
   }),
+  'lossy ball let fall, TR-BDF2': caseScene({
+    parts: 6,
+    material: { youngsModulus: 1e5, poissonsRatio: 0.4, loss: 0.2 },
+    geometry: { kind: 'shapes', shapes: [{ kind: 'sphere', centre: [0, 0, 0.3], radius: 0.2 }] },
+    loads: [{ id: 'L1', name: 'Gravity', kind: 'gravity', acceleration: [0, 0, -9.81] }],
+    obstacles: [{ id: 'O1', name: 'Ground', kind: 'ground', height: 0, friction: 0.2 }],
+    time: { kind: 'motion', framesPerSecond: 24, frames: 10, substeps: 2, method: 'tr-bdf2' },
+  }),
 };
 
 /** The requests that open and bake a scene of built-in shapes. */

@@ -89,6 +89,23 @@ export function MaterialCard({ document, edit, mass }: { document: SceneDocument
         refuse={(v) => (v > 0 ? null : 'The density must be greater than 0.')}
         onChange={(v) => set('density', { density: v })}
       />
+      <DimensionSlider
+        label="Loss"
+        hint="how soon a wobble dies, at 2 Hz"
+        value={material.loss ?? 0}
+        min={0}
+        max={0.5}
+        step={0.01}
+        format={(v) => v.toFixed(2)}
+        refuse={(v) =>
+          v < 0
+            ? 'Loss cannot be negative: nothing gains energy by moving.'
+            : v > 1
+              ? 'A loss factor above 1 is honey. Use 1 or less.'
+              : null
+        }
+        onChange={(v) => set('loss', { loss: Number(v.toFixed(3)) })}
+      />
       <Fact name="Mass of the body" value={mass === null ? '…' : massText(mass)} />
       {choosing ? (
         <PresetSheet

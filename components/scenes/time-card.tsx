@@ -1,17 +1,26 @@
+import { useEffect, useState } from 'react';
 import type { SceneDocument } from '../../shared/scene-document';
 import { figures } from '../../shared/units';
+import type { energyKept, TimeMethod } from '../../solver/index';
+import { stageModule } from '../stage/stage-module';
 import { ChoiceOfFew } from '../ui/choice-of-few';
 import { Card } from '../ui/card';
 import { DimensionSlider } from '../ui/dimension-slider';
 import { Text } from '../ui/text';
 import type { Edit } from './edit';
 
+type Motion = Extract<SceneDocument['time'], { kind: 'motion' }>;
+
 const MOTION = { kind: 'motion', framesPerSecond: 24, frames: 48, substeps: 2, method: 'backward-euler' } as const;
 
 /** Frames, substeps and method, and the damping the choice brings with it. */
 export function TimeCard({ document, edit }: { document: SceneDocument; edit: Edit }) {
   const { time } = document;
-  const set = (kind: string, change: Partial<Extract<SceneDocument['time'], { kind: 'motion' }>>) =>
+  const [rule, setRule] = useState<typeof energyKept | null>(null);
+  useEffect(() => {
+    void stageModule().then((module) => setRule(() => module.energyKept));
+  }, []);
+  const set = (kind: string, change: Partial<Motion>) =>
     edit(`time-${kind}`, (d) => (d.time.kind === 'motion' ? { ...d, time: { ...d.time, ...change } } : d));
   return (
     <Card
@@ -82,13 +91,13 @@ export function TimeCard({ document, edit }: { document: SceneDocument; edit: Ed
             onChange={(method) => set('method', { method })}
             options={[
               { value: 'backward-euler', label: 'Backward Euler' },
+              { value: 'bdf2', label: 'BDF2' },
               { value: 'hht', label: 'HHT' },
+              { value: 'tr-bdf2', label: 'TR-BDF2' },
             ]}
           />
           <Text variant="note" color="ink2">
-            {time.method === 'backward-euler'
-              ? `Robust, and it damps by itself: a wobble of 2 Hz keeps ${figures(100 * backwardEulerEnergy(2, time.framesPerSecond * time.substeps), 2)} % of its energy after a second. More substeps keep more.`
-              : 'Keeps a wobble alive. Slower; best without contact.'}
+            {`${METHOD_WORDS[time.method]}${rule ? lossWords(rule, time) : ''}`}
           </Text>
         </>
       )}
@@ -96,8 +105,18 @@ export function TimeCard({ document, edit }: { document: SceneDocument; edit: Ed
   );
 }
 
-/** Energy left after one second of an undamped oscillator of `hertz`: (1 + ω²h²)^(−steps), closed form of backward Euler. */
-export function backwardEulerEnergy(hertz: number, stepsPerSecond: number): number {
-  const wh = (2 * Math.PI * hertz) / stepsPerSecond;
-  return (1 + wh * wh) ** -stepsPerSecond;
+const METHOD_WORDS: Record<TimeMethod, string> = {
+  'backward-euler': 'The most robust.',
+  bdf2: 'Robust, and keeps far more of a wobble.',
+  hht: 'Keeps a wobble alive; best without contact.',
+  'tr-bdf2': 'Keeps most; two solves a step.',
+};
+
+/** What the method itself takes from two wobbles in a second. */
+function lossWords(rule: typeof energyKept, { method, framesPerSecond, substeps }: Motion): string {
+  const kept = (hertz: number) => {
+    const percent = 100 * rule(method, hertz, 1 / (framesPerSecond * substeps));
+    return percent < 0.1 ? 'less than 0.1' : figures(percent, 2);
+  };
+  return ` By itself it leaves a wobble of 2 Hz ${kept(2)} % of its energy after a second, one of 6 Hz ${kept(6)} %. More substeps keep more.`;
 }

@@ -55,6 +55,7 @@ function materialsOf({ materials }: SceneDocument, out: Settings): void {
     out.set(`Law${of}`, LAW_WORDS[m.law]);
     out.set(`Young’s modulus${of}`, stressText(m.youngsModulus));
     out.set(`Poisson’s ratio${of}`, figures(m.poissonsRatio));
+    out.set(`Loss${of}`, figures(m.loss ?? 0));
     out.set(`Density${of}`, `${figures(m.density)} kg/m³`);
     if (materials.length > 1) out.set(`Where${of}`, m.patches ? patchWords(m.patches) : 'all other patches');
   }
@@ -116,8 +117,10 @@ function timeOf({ time }: SceneDocument, out: Settings): void {
   out.set('Frames per second', figures(time.framesPerSecond, 4));
   out.set('Frames', String(time.frames));
   out.set('Substeps', String(time.substeps));
-  out.set('Method', time.method === 'hht' ? 'HHT' : 'backward Euler');
+  out.set('Method', METHOD_NAMES[time.method]);
 }
+
+const METHOD_NAMES = { 'backward-euler': 'backward Euler', bdf2: 'BDF2', hht: 'HHT', 'tr-bdf2': 'TR-BDF2' } as const;
 
 const mm = (metres: number) => figures(metres * 1000);
 const numbers = (v: readonly number[]) => v.map((x) => figures(x)).join(' ');

@@ -7,7 +7,7 @@ import { StageScene } from './stage-scene';
 import type { StageMark, StageViewProps } from './stage-types';
 
 // What screens need of the solver comes in this chunk too: anything that two chunks load moves into the first page.
-export { decodeChunk, displaySurface, scalePatch, surfaceFromRecipe } from '../../solver/index';
+export { decodeChunk, displaySurface, energyKept, scalePatch, surfaceFromRecipe } from '../../solver/index';
 
 const TAP_PIXELS = 6;
 const NONE: ReadonlySet<number> = new Set();

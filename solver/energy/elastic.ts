@@ -34,6 +34,8 @@ export class ElasticEnergy {
   private thetaAtHessian: Float64Array;
   /** D vectors of all groups, 4 a group, filled by `hessian` */
   private readonly directions: Float64Array;
+  /** by body: how much faster the pose given to `gradient` moves than the pose itself, see `setStretch` */
+  private stretch: Float64Array;
   private lame: Lame[] = [];
   private laws: Law[] = [];
 
@@ -64,6 +66,7 @@ export class ElasticEnergy {
         this.pointModes.set(this.modes.subarray(4 * e, 4 * e + 4), 4 * dilatation.points[e]!);
       }
     }
+    this.stretch = new Float64Array(prepared.bodies.length).fill(1);
     this.thetaAtHessian = new Float64Array(4 * dilatation.count);
     this.directions = kernels.allocate(4 * dilatation.count * parts.count * 3 * parts.basis);
   }
@@ -76,6 +79,14 @@ export class ElasticEnergy {
       lameOf(materials[body.material]!.youngsModulus, materials[body.material]!.poissonsRatio),
     );
     for (let k = 0; k < points.count; k++) this.shear[k] = points.volumes[k]! * this.lame[points.body[k]!]!.mu;
+  }
+
+  /**
+   * The pose y given to `gradient` is stretch · x + constant by body: the gradient stays ∂E/∂y, a force; energies are
+   * divided by the stretch and Hessians multiplied by it, so that all three belong to x.
+   */
+  setStretch(stretch: ArrayLike<number>): void {
+    this.stretch.set(stretch);
   }
 
   /**
@@ -106,7 +117,7 @@ export class ElasticEnergy {
       const body = points.body[k]!;
       this.laws[body]!.volumetric(volumetric, j, this.lame[body]!);
       const squares = f0 * f0 + f1 * f1 + f2 * f2 + f3 * f3 + f4 * f4 + f5 * f5 + f6 * f6 + f7 * f7 + f8 * f8;
-      energy += this.shear[k]! * 0.5 * (squares - 3) + points.volumes[k]! * volumetric[0]!;
+      energy += (this.shear[k]! * 0.5 * (squares - 3) + points.volumes[k]! * volumetric[0]!) / this.stretch[body]!;
       this.alpha[k] = volumetric[1]!;
       this.beta[k] = volumetric[2]!;
     }
@@ -124,7 +135,7 @@ export class ElasticEnergy {
       theta[4 * g + 1] = t1;
       theta[4 * g + 2] = t2;
       theta[4 * g + 3] = t3;
-      energy += (lambda / 2) * (t0 * t0 + t1 * t1 + t2 * t2 + t3 * t3);
+      energy += ((lambda / 2) * (t0 * t0 + t1 * t1 + t2 * t2 + t3 * t3)) / this.stretch[dilatation.body[g]!]!;
     }
     if (!r) return energy;
     // PV = V (μ F + p cof F), p = f′ + λ Σ θ m; `beta` still holds f″, `alpha` f′.
@@ -152,7 +163,7 @@ export class ElasticEnergy {
   addShear(K: Float64Array, factor: number): void {
     this.kernels.assembleLaplace(
       K,
-      this.shear.map((s) => s * factor),
+      this.shear.map((s, k) => s * factor * this.stretch[this.prepared.points.body[k]!]!),
     );
   }
 
@@ -180,7 +191,8 @@ export class ElasticEnergy {
           const at = part * 3 * parts.basis;
           for (let u = at; u < at + 3 * parts.basis; u++) change += this.directions[from + u]! * delta[u]!;
         }
-        this.pressure[4 * g + m] = lambda * (this.thetaAtHessian[4 * g + m]! + s * change);
+        this.pressure[4 * g + m] =
+          lambda * (this.thetaAtHessian[4 * g + m]! + s * this.stretch[dilatation.body[g]!]! * change);
       }
     }
   }
@@ -219,14 +231,18 @@ export class ElasticEnergy {
         second = Math.max(second, 0);
       }
       const c = p === 0 ? 0 : -p / j;
-      alpha[k] = factor * points.volumes[k]! * (second - c);
-      beta[k] = factor * points.volumes[k]! * c;
+      const weight = factor * this.stretch[body]! * points.volumes[k]!;
+      alpha[k] = weight * (second - c);
+      beta[k] = weight * c;
     }
     if (single) this.kernels.assembleSingle(K, cof, alpha, beta);
     else this.kernels.assemble(K, cof, alpha, beta);
     this.thetaAtHessian.set(this.theta);
     this.kernels.directions(this.directions, dilatation.count, cof, this.pointModes, this.dilatationOfPoint);
-    const factors = Float64Array.from({ length: dilatation.count }, (_, g) => factor * this.groupLambda(g));
+    const factors = Float64Array.from(
+      { length: dilatation.count },
+      (_, g) => factor * this.stretch[dilatation.body[g]!]! * this.groupLambda(g),
+    );
     if (single) this.kernels.addOuterSingle(K, this.directions, factors, this.members);
     else this.kernels.addOuter(K, this.directions, factors, this.members);
   }

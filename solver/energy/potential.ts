@@ -8,6 +8,7 @@ import { GroundContact } from './contact';
 import { ElasticEnergy } from './elastic';
 import { Loads } from './loads';
 import { subtractRows } from './rows';
+import { dampingTime } from '../material/law';
 import { carry, carryShare, penaltyStiffness, placeSupports, type PlacedSupport } from './supports';
 import { cubeRoot } from '../math/elementary';
 
@@ -142,11 +143,40 @@ export class PotentialEnergy {
     }
   }
 
+  /**
+   * Material loss, proportional to stiffness (Kelvin and Voigt): while a lag is set, the elastic forces at c are those of
+   * the pose c + τ v, v = slope (c − anchor), τ the damping time of the body. For small strain that is C = τ K. null:
+   * no loss.
+   */
+  setLag(lag: { slope: number; anchor: Float64Array } | null): void {
+    const { bodies, parts } = this.prepared;
+    const size = 3 * parts.basis;
+    const times = bodies.map(({ material }) => dampingTime(this.scene.materials[material]!));
+    this.lag =
+      lag && times.some((time) => time > 0)
+        ? { stretch: new Float64Array(this.dead.length), shift: new Float64Array(this.dead.length) }
+        : null;
+    this.elastic.setStretch(times.map((time) => 1 + (this.lag ? time * lag!.slope : 0)));
+    if (!this.lag || !lag) return;
+    for (let u = 0; u < this.dead.length; u++) {
+      const pull = times[parts.body[Math.floor(u / size)]!]! * lag.slope;
+      this.lag.stretch[u] = 1 + pull;
+      this.lag.shift[u] = -pull * lag.anchor[u]!;
+    }
+  }
+
+  private lag: { stretch: Float64Array; shift: Float64Array } | null = null;
+
+  private lagged(c: Float64Array): Float64Array {
+    const { lag } = this;
+    return lag ? c.map((value, u) => lag.stretch[u]! * value + lag.shift[u]!) : c;
+  }
+
   /** Energy at c, J, with the work of the dead loads taken off; writes the gradient to r. */
   gradient(c: Float64Array, r: Float64Array): number {
     const { prepared } = this;
     r.fill(0);
-    let energy = this.elastic.gradient(c, r);
+    let energy = this.elastic.gradient(this.lagged(c), r);
     prepared.bodies.forEach((_, b) => {
       const s = this.stabilisationOf(b);
       const form = (this.scratch ??= new Float64Array(r.length));

@@ -29,3 +29,14 @@ export function lameOf(youngsModulus: number, poissonsRatio: number): Lame {
     lambda: (youngsModulus * poissonsRatio) / ((1 + poissonsRatio) * (1 - 2 * poissonsRatio)),
   };
 }
+
+/** The frequency at which a material's loss factor holds, Hz: where soft creatures wobble. */
+export const LOSS_HERTZ = 2;
+
+/**
+ * Damping time τ, s, of stiffness-proportional damping C = τ K with the material's loss factor η at 2 Hz: η = ω τ, the
+ * damping ratio is η/2 (Clough and Penzien 1993, sec. 12-5, with α = 0). Faster wobbles lose more in proportion.
+ */
+export function dampingTime({ loss = 0 }: { loss?: number | undefined }): number {
+  return loss / (2 * Math.PI * LOSS_HERTZ);
+}

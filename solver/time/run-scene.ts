@@ -3,7 +3,8 @@ import type { Kernels } from '../kernels/kernels';
 import { prepare } from '../quadrature/prepare';
 import type { Prepared } from '../quadrature/prepared';
 import type { Scene } from '../scene';
-import { Simulation, type Readouts } from './simulation';
+import type { Readouts } from './readouts';
+import { Simulation } from './simulation';
 
 export interface SceneResult {
   prepared: Prepared;

@@ -1,20 +1,18 @@
-import { constraintReaction } from '../energy/constraints';
 import { PotentialEnergy } from '../energy/potential';
-import { evaluateRow, pickRows } from '../energy/rows';
+import { pickRows } from '../energy/rows';
 import { penaltyStiffness } from '../energy/supports';
 import type { BoundKernels, Kernels } from '../kernels/kernels';
 import { minimise, type NewtonProblem, type NewtonReport } from '../linear/newton';
 import type { BlockPattern } from '../linear/block-pattern';
 import type { Prepared } from '../quadrature/prepared';
 import { restCoefficients } from '../quadrature/rest';
-import type { Scene, Vec3 } from '../scene';
+import type { Scene, TimeMethod, Vec3 } from '../scene';
+import { gaugeRows, type Readouts, readoutsOf } from './readouts';
 import { SolverStopped } from './solver-stopped';
+import { type Motion, needsAcceleration, needsStartForces, type Stage, STAGES } from './stages';
 import { SystemMatrix } from './system-matrix';
 import { systemPattern } from './system-pattern';
 import { cubeRoot } from '../math/elementary';
-
-/** Dissipation of the Hilber–Hughes–Taylor method (Hilber, Hughes and Taylor 1977), 0 … 1/3. */
-const HHT_ALPHA = 0.1;
 
 /** Largest change of a coefficient over the diagonal at which a step counts as solved. */
 const LIVE_TOLERANCE = 5e-5;
@@ -35,20 +33,6 @@ export interface StaticReport {
   changes: number[];
 }
 
-export interface Readouts {
-  /** J */
-  kinetic: number;
-  elastic: number;
-  gravity: number;
-  /** current over rest volume − 1 */
-  volumeChange: number;
-  /** smallest J over the quadrature points */
-  worstCompression: number;
-  gauges: { id: string; name: string; position: Vec3; displacement: Vec3 }[];
-  /** Force (N) and moment (N m, about the support's pivot) that each support puts on the body. */
-  supports: { id: string; name: string; force: Vec3; moment: Vec3 }[];
-}
-
 /** A scene in motion: coefficients, velocities and everything that moves them. SI units. */
 export class Simulation {
   readonly coefficients: Float64Array;
@@ -59,6 +43,10 @@ export class Simulation {
   /** gradient of the potential at the start of the step, for HHT; valid when `hasGradient` */
   private readonly startGradient: Float64Array;
   private hasGradient = false;
+  /** whether `acceleration` belongs to the present pose */
+  private hasAcceleration = false;
+  /** the motion one step earlier, and that step's length, for BDF2 */
+  private before: { dt: number; motion: Motion } | null = null;
   private readonly rest: Float64Array;
   private readonly bound: BoundKernels;
   private readonly pattern: BlockPattern;
@@ -66,7 +54,7 @@ export class Simulation {
   private readonly matrix: SystemMatrix;
   private factorFresh = false;
   /** vertex of the drawn surface nearest to each gauge */
-  private gaugeRows: number[] = [];
+  private gauges: number[] = [];
   private scene: Scene;
 
   /** Throws a RangeError with a sentence when the scene does not fit the prepared body. */
@@ -85,7 +73,7 @@ export class Simulation {
     this.bound = kernels.bind(prepared.points, this.pattern, prepared.parts.basis);
     this.potential = new PotentialEnergy(prepared, scene, this.bound, this.pattern);
     this.matrix = new SystemMatrix(this.bound, this.pattern, this.potential);
-    this.findGauges();
+    this.gauges = gaugeRows(scene, prepared);
     this.potential.elastic.gradient(this.coefficients, null);
   }
 
@@ -96,7 +84,7 @@ export class Simulation {
     this.matrix.forget();
     this.factorFresh = false;
     this.hasGradient = false;
-    this.findGauges();
+    this.gauges = gaugeRows(scene, this.prepared);
   }
 
   /** Back to the rest pose at time 0. */
@@ -105,8 +93,7 @@ export class Simulation {
     this.velocity.fill(0);
     this.acceleration.fill(0);
     this.time = 0;
-    this.hasGradient = false;
-    this.factorFresh = false;
+    this.forgetPast();
   }
 
   /** Takes a pose and velocity (a refit after the part count changed) at `time`. */
@@ -115,7 +102,13 @@ export class Simulation {
     this.velocity.set(velocity);
     this.acceleration.fill(0);
     this.time = time;
+    this.forgetPast();
+  }
+
+  private forgetPast(): void {
     this.hasGradient = false;
+    this.hasAcceleration = false;
+    this.before = null;
     this.factorFresh = false;
   }
 
@@ -153,7 +146,7 @@ export class Simulation {
     const before = this.saveState();
     if (fresh) this.factorFresh = false;
     try {
-      const report = this.advance(dt, time.method === 'hht', exact);
+      const report = this.advance(dt, time.method, exact);
       if (report.converged) return { newtonSteps: report.steps, factors: report.factors, converged: true };
     } catch (error) {
       this.restoreState(before);
@@ -168,23 +161,38 @@ export class Simulation {
     );
   }
 
-  private advance(dt: number, hht: boolean, exact: boolean): NewtonReport {
-    const { potential, coefficients: c, velocity: v, acceleration: a, startGradient } = this;
-    const n = c.length;
-    const alpha = hht ? HHT_ALPHA : 0;
-    const beta = hht ? (1 + alpha) ** 2 / 4 : 1;
-    const gamma = hht ? 0.5 + alpha : 1;
-    if (hht && !this.hasGradient) this.startAcceleration(dt);
-    const inertia = 1 / (beta * dt * dt);
-    const start = c.slice();
-    const predicted = new Float64Array(n);
-    // Backward Euler damps fast modes, so its velocity foretells the pose; HHT's still rings in them.
-    const guess = hht ? undefined : new Float64Array(n);
-    for (let u = 0; u < n; u++) {
-      predicted[u] = c[u]! + dt * v[u]! + (hht ? dt * dt * (0.5 - beta) * a[u]! : 0);
-      if (guess) guess[u] = predicted[u]!;
+  private advance(dt: number, method: TimeMethod, exact: boolean): NewtonReport {
+    const now = this.motion();
+    if (needsAcceleration(method) && !(needsStartForces(method) ? this.hasGradient : this.hasAcceleration))
+      this.startAcceleration(dt);
+    now.a.set(this.acceleration);
+    const before = this.before?.dt === dt ? this.before.motion : null;
+    const begin = this.time;
+    let middle = now;
+    let report: NewtonReport | null = null;
+    for (const stage of STAGES[method]) {
+      const own = this.solveStage(stage({ dt, now, before, middle }), begin, dt, exact);
+      report = report ? { ...own, steps: report.steps + own.steps, factors: report.factors + own.factors } : own;
+      if (!report.converged) return report;
+      middle = this.motion();
     }
-    this.setForces(this.time + dt, dt);
+    this.before = { dt, motion: now };
+    this.hasAcceleration = true;
+    this.hasGradient = needsStartForces(method);
+    this.time = begin + dt;
+    return report!;
+  }
+
+  private motion(): Motion {
+    return { x: this.coefficients.slice(), v: this.velocity.slice(), a: this.acceleration.slice() };
+  }
+
+  private solveStage(stage: Stage, begin: number, dt: number, exact: boolean): NewtonReport {
+    const { potential, coefficients: c, velocity: v, acceleration: a, startGradient } = this;
+    const { inertia, predicted, stiffness, slope, anchor } = stage;
+    const n = c.length;
+    this.setForces(begin + stage.end * dt, stage.end * dt);
+    potential.setLag({ slope, anchor });
     const work = new Float64Array(n);
     const product = new Float64Array(n);
     const r = new Float64Array(n);
@@ -193,48 +201,35 @@ export class Simulation {
         const energy = potential.gradient(pose, gradient);
         for (let u = 0; u < n; u++) work[u] = pose[u]! - predicted[u]!;
         potential.applyMass(product, work);
-        let total = (1 - alpha) * energy;
+        let total = stiffness * energy;
         for (let u = 0; u < n; u++) {
-          total += 0.5 * inertia * product[u]! * work[u]! + alpha * startGradient[u]! * pose[u]!;
-          gradient[u] = (1 - alpha) * gradient[u]! + alpha * startGradient[u]! + inertia * product[u]!;
+          total += 0.5 * inertia * product[u]! * work[u]! + (1 - stiffness) * startGradient[u]! * pose[u]!;
+          gradient[u] = stiffness * gradient[u]! + (1 - stiffness) * startGradient[u]! + inertia * product[u]!;
         }
         return total;
       },
       worstJ: () => potential.elastic.worstJ(),
-      refresh: (definite, predicted) =>
-        this.matrix.refresh(c, { stiffness: 1 - alpha, mass: inertia }, definite, predicted),
+      refresh: (definite, told) => this.matrix.refresh(c, { stiffness, mass: inertia }, definite, told),
       solve: (x, closely) => this.matrix.solve(x, closely),
       stepped: (delta, s) => potential.elastic.predictPressure(delta, s),
     };
-    const report = minimise(
-      problem,
-      c,
-      r,
-      {
-        tolerance: exact ? BAKE_TOLERANCE : LIVE_TOLERANCE,
-        size: this.prepared.report.diagonal,
-        maxSteps: 60,
-        factor: 'lagged',
-        keepFactor: this.factorFresh,
-        trustFullSteps: true,
-      },
-      guess,
-    );
+    const options = {
+      tolerance: exact ? BAKE_TOLERANCE : LIVE_TOLERANCE,
+      size: this.prepared.report.diagonal,
+      maxSteps: 60,
+      factor: 'lagged',
+      keepFactor: this.factorFresh,
+      trustFullSteps: true,
+    } as const;
+    const report = minimise(problem, c, r, options, stage.foretells ? predicted : undefined);
+    if (stiffness < 1) potential.gradient(c, startGradient);
+    else startGradient.fill(0);
+    potential.setLag(null);
     this.factorFresh = report.converged;
     for (let u = 0; u < n; u++) {
-      if (hht) {
-        const next = inertia * (c[u]! - predicted[u]!);
-        v[u] = v[u]! + dt * ((1 - gamma) * a[u]! + gamma * next);
-        a[u] = next;
-      } else {
-        v[u] = (c[u]! - start[u]!) / dt;
-        a[u] = 0;
-      }
+      v[u] = slope * (c[u]! - anchor[u]!);
+      a[u] = inertia * (c[u]! - predicted[u]!);
     }
-    if (hht) potential.gradient(c, startGradient);
-    else startGradient.fill(0);
-    this.hasGradient = hht;
-    this.time += dt;
     return report;
   }
 
@@ -304,95 +299,45 @@ export class Simulation {
     }
     this.velocity.fill(0);
     this.acceleration.fill(0);
-    this.hasGradient = false;
-    this.factorFresh = false;
+    this.forgetPast();
     return { converged: true, newtonSteps, loadSteps, changes };
   }
 
   /** Everything the next step depends on, as one array. */
   saveState(): Float64Array {
+    const past = this.before?.motion;
+    const parts = [
+      this.coefficients, this.velocity, this.acceleration, this.startGradient,
+      ...(past ? [past.x, past.v, past.a] : []),
+    ]; // prettier-ignore
     const n = this.coefficients.length;
-    const state = new Float64Array(2 + 4 * n);
-    state[0] = this.time;
-    state[1] = this.hasGradient ? 1 : 0;
-    state.set(this.coefficients, 2);
-    state.set(this.velocity, 2 + n);
-    state.set(this.acceleration, 2 + 2 * n);
-    state.set(this.startGradient, 2 + 3 * n);
+    const state = new Float64Array(4 + parts.length * n);
+    state.set([this.time, this.hasGradient ? 1 : 0, this.hasAcceleration ? 1 : 0, this.before?.dt ?? 0]);
+    parts.forEach((part, k) => state.set(part, 4 + k * n));
     return state;
   }
 
   /** Takes a state made by `saveState` of the same scene and parts; the next exact step gives the same bits. */
   restoreState(state: Float64Array): void {
     const n = this.coefficients.length;
-    if (state.length !== 2 + 4 * n)
-      throw new RangeError(`This state has ${state.length} numbers; ${2 + 4 * n} were expected.`);
+    const dt = state[3] ?? 0;
+    const expected = 4 + (dt > 0 ? 7 : 4) * n;
+    if (state.length !== expected)
+      throw new RangeError(`This state has ${state.length} numbers; ${expected} were expected.`);
+    const part = (k: number) => state.slice(4 + k * n, 4 + (k + 1) * n);
     this.time = state[0]!;
     this.hasGradient = state[1] === 1;
-    this.coefficients.set(state.subarray(2, 2 + n));
-    this.velocity.set(state.subarray(2 + n, 2 + 2 * n));
-    this.acceleration.set(state.subarray(2 + 2 * n, 2 + 3 * n));
-    this.startGradient.set(state.subarray(2 + 3 * n, 2 + 4 * n));
+    this.hasAcceleration = state[2] === 1;
+    this.coefficients.set(part(0));
+    this.velocity.set(part(1));
+    this.acceleration.set(part(2));
+    this.startGradient.set(part(3));
+    this.before = dt > 0 ? { dt, motion: { x: part(4), v: part(5), a: part(6) } } : null;
     this.factorFresh = false;
   }
 
   readouts(): Readouts {
-    const { potential, prepared, coefficients: c, velocity: v } = this;
-    const elastic = potential.elastic.gradient(c, null);
-    const momentum = new Float64Array(c.length);
-    potential.applyMass(momentum, v);
-    let kinetic = 0;
-    for (let u = 0; u < c.length; u++) kinetic += 0.5 * momentum[u]! * v[u]!;
-    const weight = new Float64Array(c.length);
-    potential.loads.dead(weight, -1, 1);
-    let gravity = 0;
-    for (let u = 0; u < c.length; u++) gravity -= weight[u]! * (c[u]! - this.rest[u]!);
-    let rest = 0;
-    for (const volume of prepared.points.volumes) rest += volume;
-    const place = new Float64Array(3);
-    return {
-      kinetic,
-      elastic,
-      gravity,
-      volumeChange: potential.elastic.volume() / rest - 1,
-      worstCompression: potential.elastic.worstJ(),
-      gauges: this.scene.gauges.map((gauge, k) => {
-        const row = this.gaugeRows[k]!;
-        evaluateRow(place, prepared.surface.rows, row, c);
-        const position: Vec3 = [place[0]!, place[1]!, place[2]!];
-        evaluateRow(place, prepared.surface.rows, row, this.rest);
-        return {
-          id: gauge.id,
-          name: gauge.name,
-          position,
-          displacement: [position[0] - place[0]!, position[1] - place[1]!, position[2] - place[2]!],
-        };
-      }),
-      supports: potential.supports.map(({ support, constraint, pivot }) => ({
-        id: support.id,
-        name: support.name,
-        ...constraintReaction(constraint, c, pivot),
-      })),
-    };
+    const { prepared, potential, scene, rest, gauges: rows } = this;
+    return readoutsOf({ prepared, potential, scene, rest, rows }, this.coefficients, this.velocity);
   }
-
-  private findGauges(): void {
-    this.gaugeRows = this.scene.gauges.map((gauge) => nearest(this.prepared.surface.positions, gauge.point));
-  }
-}
-
-function nearest(positions: ArrayLike<number>, point: Vec3): number {
-  let best = 0;
-  let least = Infinity;
-  for (let s = 0; 3 * s < positions.length; s++) {
-    const d =
-      (positions[3 * s]! - point[0]) ** 2 +
-      (positions[3 * s + 1]! - point[1]) ** 2 +
-      (positions[3 * s + 2]! - point[2]) ** 2;
-    if (d < least) {
-      least = d;
-      best = s;
-    }
-  }
-  return best;
 }

@@ -1,7 +1,7 @@
 import type { Patch } from '../geometry/patch';
 import type { SetupReport, SurfaceMap } from '../quadrature/prepared';
 import type { Scene, Vec3 } from '../scene';
-import type { Readouts } from '../time/simulation';
+import type { Readouts } from '../time/readouts';
 
 /** How fast the live view runs against the clock. */
 export type LiveSpeed = 'slow' | 'real-time' | 'flat-out';
