@@ -24,7 +24,7 @@ module.exports = {
     {
       displayName: 'node',
       testEnvironment: 'node',
-      testMatch: ['<rootDir>/__tests__/{server,solver,shared}/**/*.test.ts'],
+      testMatch: ['<rootDir>/__tests__/{server,solver,shared,cross-check}/**/*.test.ts'],
       transform: swc,
       transformIgnorePatterns: ['node_modules/(?!@noble/)'],
       modulePathIgnorePatterns: ['<rootDir>/.data', '<rootDir>/dist', '<rootDir>/dist-server'],
