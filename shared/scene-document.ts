@@ -97,8 +97,24 @@ export const loadSchema = z.discriminatedUnion('kind', [
   }),
   z.strictObject({
     ...loadBase,
+    kind: z.literal('twist'),
+    region: regionSchema,
+    axis: vec3.refine((a) => Math.hypot(...a) > 0, 'A twist needs a direction for its axis.'),
+    moment: finite,
+    from: notNegative('The start').default(0),
+    until: notNegative('The end').nullable().default(null),
+  }),
+  z.strictObject({
+    ...loadBase,
     kind: z.literal('wind'),
     velocity: vec3,
+    gusts: z
+      .strictObject({
+        factor: finite.refine((x) => x >= 1 && x <= 4, 'The gust factor goes from 1 (steady) to 4.'),
+        seconds: positive('The length of a gust'),
+        seed: z.int().min(0).max(1_000_000).default(1),
+      })
+      .optional(),
     dragCoefficient: notNegative('The drag coefficient').default(1.2),
     airDensity: notNegative('The density of air').default(1.225),
   }),

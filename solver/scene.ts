@@ -80,8 +80,28 @@ export type SceneLoad =
   | { id: string; name: string; kind: 'pressure'; region: Region; pressure: number }
   /** A total force spread evenly over the region, N, acting from `from` until `until` (s). */
   | { id: string; name: string; kind: 'push'; region: Region; force: Vec3; from: number; until: number | null }
-  /** Steady wind, m/s; `dragCoefficient` scales the pressure ½ρ v² on the windward side. */
-  | { id: string; name: string; kind: 'wind'; velocity: Vec3; dragCoefficient: number; airDensity: number };
+  /** A moment, N m, about `axis` through the middle of the region as it is in the step: tangential, without a net force. */
+  | {
+      id: string;
+      name: string;
+      kind: 'twist';
+      region: Region;
+      axis: Vec3;
+      moment: number;
+      from: number;
+      until: number | null;
+    }
+  /** Mean wind, m/s; `dragCoefficient` scales the pressure ½ρ v² on the windward side. */
+  | {
+      id: string;
+      name: string;
+      kind: 'wind';
+      velocity: Vec3;
+      dragCoefficient: number;
+      airDensity: number;
+      /** left out: steady */
+      gusts?: { factor: number; seconds: number; seed: number } | undefined;
+    };
 
 export type SceneObstacle = {
   id: string;

@@ -174,6 +174,31 @@ export function HoldsCard({ document, edit, ready, unit, picking, onPick }: Prop
           }}
         />
         <Button
+          label="Twist"
+          hint="Add a twist on patches picked by touch"
+          onPress={() => {
+            const id = freeId('L', loads);
+            const moment = 0.05 * (ready?.mass ?? 1) * GRAVITY * (ready?.report.diagonal ?? 1);
+            edit('load-add', (d) => ({
+              ...d,
+              loads: [
+                ...d.loads,
+                {
+                  id,
+                  name: 'Twist',
+                  kind: 'twist',
+                  region: { kind: 'patches', patches: [0] },
+                  axis: up === 1 ? [0, 1, 0] : [0, 0, 1],
+                  moment: Number(moment.toPrecision(2)),
+                  from: 0,
+                  until: null,
+                },
+              ],
+            }));
+            onPick(id);
+          }}
+        />
+        <Button
           label="Wind"
           hint="Add wind"
           disabledReason={loads.some((load) => load.kind === 'wind') ? 'One wind is blowing.' : null}
@@ -186,7 +211,7 @@ export function HoldsCard({ document, edit, ready, unit, picking, onPick }: Prop
                   id: freeId('L', d.loads),
                   name: 'Wind',
                   kind: 'wind',
-                  velocity: [8, 0, 0],
+                  velocity: [4.34, 0, 0],
                   dragCoefficient: 1.2,
                   airDensity: 1.225,
                 },

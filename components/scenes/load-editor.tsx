@@ -1,7 +1,9 @@
 import { View } from 'react-native';
 import type { SceneDocument } from '../../shared/scene-document';
 import { figures, type LengthUnit } from '../../shared/units';
+import { beaufortOf, beaufortSpeed, GUST_PLACES, windWords } from '../../shared/wind';
 import { Button } from '../ui/button';
+import { ChoiceOfFew } from '../ui/choice-of-few';
 import { DimensionSlider } from '../ui/dimension-slider';
 import { Row } from '../ui/row';
 import { Text } from '../ui/text';
@@ -54,13 +56,19 @@ export function LoadEditor({
     <View style={{ gap: 6 }}>
       <Row
         title={`${load.id} ${load.name}`}
-        note={'region' in load ? regionWords(load.region, unit) : 'on the windward side'}
+        note={
+          'region' in load
+            ? regionWords(load.region, unit)
+            : `on the windward side, ${load.kind === 'wind' ? windWords(Math.hypot(...load.velocity)) : ''}`
+        }
         value={
           vector
             ? `${figures(Math.hypot(...vector))} ${quantity}`
             : load.kind === 'pressure'
               ? `${figures(load.pressure)} Pa`
-              : ''
+              : load.kind === 'twist'
+                ? `${figures(load.moment)} N m`
+                : ''
         }
         state={remove}
       />
@@ -71,6 +79,21 @@ export function LoadEditor({
           pressed={picking}
           onPress={() => onPick(!picking)}
           style={{ alignSelf: 'flex-start' }}
+        />
+      ) : null}
+      {load.kind === 'wind' ? <WindForce load={load} set={(next) => set(() => next)} /> : null}
+      {load.kind === 'twist' ? (
+        <ChoiceOfFew
+          label={`Axis of ${load.id}`}
+          value={AXES[load.axis.findIndex((x) => x !== 0)] ?? 'x'}
+          onChange={(axis) =>
+            set((l) =>
+              l.kind === 'twist'
+                ? { ...l, axis: AXES.map((a) => (a === axis ? 1 : 0)) as [number, number, number] }
+                : l,
+            )
+          }
+          options={AXES.map((axis) => ({ value: axis, label: `About ${axis}` }))}
         />
       ) : null}
       {vector ? (
@@ -94,6 +117,18 @@ export function LoadEditor({
             }
           />
         ))
+      ) : load.kind === 'twist' ? (
+        <DimensionSlider
+          label="Moment"
+          hint={`about ${AXES[load.axis.findIndex((x) => x !== 0)] ?? 'its axis'}`}
+          value={load.moment}
+          min={-twistReach(load.moment)}
+          max={twistReach(load.moment)}
+          step={twistReach(load.moment) / 100}
+          unit="N m"
+          format={(v) => figures(v)}
+          onChange={(v) => set((l) => (l.kind === 'twist' ? { ...l, moment: Number(v.toPrecision(4)) } : l))}
+        />
       ) : load.kind === 'pressure' ? (
         <DimensionSlider
           label="Pressure"
@@ -113,3 +148,60 @@ export function LoadEditor({
     </View>
   );
 }
+
+const twistReach = (moment: number) => 10 ** Math.ceil(Math.log10(Math.max(1e-4, 2 * Math.abs(moment))));
+
+type Wind = Extract<Load, { kind: 'wind' }>;
+
+/** Strength on the Beaufort scale, direction kept, and how gusty it is. */
+function WindForce({ load, set }: { load: Wind; set: (load: Wind) => void }) {
+  const speed = Math.hypot(...load.velocity);
+  const place = GUST_PLACES.find(({ factor }) => Math.abs(factor - (load.gusts?.factor ?? 1)) < 0.005)?.value ?? null;
+  return (
+    <>
+      <DimensionSlider
+        label="Beaufort"
+        hint={windWords(speed)}
+        value={beaufortOf(speed)}
+        min={0}
+        max={12}
+        step={1}
+        format={(v) => String(Math.round(v))}
+        refuse={(v) => (v >= 0 && v <= 12 ? null : 'The scale goes from 0 to 12.')}
+        onChange={(v) => {
+          const next = beaufortSpeed(Math.round(v));
+          const along = speed > 0 ? load.velocity.map((x) => x / speed) : [1, 0, 0];
+          set({ ...load, velocity: along.map((x) => Number((x * next).toPrecision(4))) as Wind['velocity'] });
+        }}
+      />
+      <ChoiceOfFew
+        label="Gusts"
+        value={place ?? ('' as (typeof GUST_PLACES)[number]['value'])}
+        onChange={(value) => {
+          const { factor } = GUST_PLACES.find((each) => each.value === value)!;
+          set({
+            ...load,
+            gusts: factor === 1 ? undefined : { factor, seconds: GUST_SECONDS, seed: load.gusts?.seed ?? 1 },
+          });
+        }}
+        options={GUST_PLACES}
+      />
+      {load.gusts ? (
+        <DimensionSlider
+          label="A gust takes"
+          value={load.gusts.seconds}
+          min={0.3}
+          max={10}
+          step={0.1}
+          unit="s"
+          format={(v) => figures(v)}
+          refuse={(v) => (v > 0 ? null : 'A gust takes some time.')}
+          onChange={(v) => set({ ...load, gusts: { ...load.gusts!, seconds: Number(v.toFixed(2)) } })}
+        />
+      ) : null}
+    </>
+  );
+}
+
+/** A gust factor speaks of the strongest three seconds. */
+const GUST_SECONDS = 3;

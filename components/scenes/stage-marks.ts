@@ -29,6 +29,17 @@ export function stageMarks(document: SceneDocument, ready: Ready): StageMark[] {
             text: `${figures(Math.hypot(...load.force))} N`,
           },
         ];
+      if (load.kind === 'twist') {
+        return [
+          {
+            id: load.id,
+            kind: 'load',
+            at: place(load.region),
+            direction: load.axis,
+            text: `${figures(load.moment)} N m`,
+          },
+        ];
+      }
       if (load.kind === 'wind') {
         return [
           {

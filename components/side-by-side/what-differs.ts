@@ -95,7 +95,18 @@ function loadsOf({ loads }: SceneDocument, out: Settings): void {
         break;
       case 'wind':
         out.set(name, `${numbers(load.velocity)} m/s`);
+        out.set(
+          `${name}, gusts`,
+          load.gusts ? `up to ${figures(load.gusts.factor)} ×, ${figures(load.gusts.seconds)} s` : 'steady',
+        );
         out.set(`${name}, drag`, `${figures(load.dragCoefficient)} at ${figures(load.airDensity)} kg/m³`);
+        break;
+      case 'twist':
+        out.set(name, `${figures(load.moment)} N m about ${numbers(load.axis)}`);
+        out.set(
+          `${name}, when`,
+          `${figures(load.from)} s to ${load.until === null ? 'the end' : `${figures(load.until)} s`}`,
+        );
         break;
       case 'traction':
         out.set(name, `${numbers(load.traction)} Pa`);

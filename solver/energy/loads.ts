@@ -1,7 +1,8 @@
 import type { Prepared } from '../quadrature/prepared';
 import { samplesInRegion } from '../quadrature/regions';
-import type { Scene } from '../scene';
+import type { Scene, SceneLoad } from '../scene';
 import { applyForm } from '../kernels/plain-blocks';
+import { gustShare } from './gusts';
 import { evaluateRow, scatterRow } from './rows';
 
 /** A load that found its samples, ready to be added to the force vector. */
@@ -59,23 +60,81 @@ export class Loads {
     }
   }
 
-  /** out += the wind on the windward side at pose c moving with velocity v: ½ ρ C (relative normal speed)². */
-  wind(out: Float64Array, c: Float64Array, v: Float64Array, share: number): void {
+  /**
+   * out += the loads that are renewed once a step from its start: wind on the windward side at pose c moving with
+   * velocity v, ½ ρ C (relative normal speed)², and twists. `time` null: at rest, the mean wind and every twist.
+   */
+  followers(out: Float64Array, c: Float64Array, v: Float64Array, time: number | null, share: number): void {
+    for (const { load, samples: chosen } of this.placed) {
+      if (load.kind === 'wind') this.wind(out, load, chosen, c, v, time, share);
+      else if (
+        load.kind === 'twist' &&
+        (time === null || (time >= load.from && (load.until === null || time < load.until)))
+      )
+        this.twist(out, load, chosen, c, share);
+    }
+  }
+
+  private wind(
+    out: Float64Array,
+    load: Extract<SceneLoad, { kind: 'wind' }>,
+    chosen: Int32Array,
+    c: Float64Array,
+    v: Float64Array,
+    time: number | null,
+    share: number,
+  ): void {
     const { samples } = this.prepared;
     const [normal, speed] = this.scratch as [Float64Array, Float64Array, Float64Array];
-    for (const { load, samples: chosen } of this.placed) {
-      if (load.kind !== 'wind') continue;
-      for (const s of chosen) {
-        this.areaVector(normal, s, c);
-        evaluateRow(speed, samples.rows, s, v);
-        const area = Math.sqrt(normal[0]! ** 2 + normal[1]! ** 2 + normal[2]! ** 2);
-        if (!(area > 0)) continue;
-        let into = 0;
-        for (let d = 0; d < 3; d++) into += ((load.velocity[d]! - speed[d]!) * normal[d]!) / area;
-        if (into >= 0) continue;
-        const p = -0.5 * share * load.airDensity * load.dragCoefficient * into * into;
-        scatterRow(out, samples.rows, s, p * normal[0]!, p * normal[1]!, p * normal[2]!);
-      }
+    const swell = load.gusts && time !== null ? gustShare(load.gusts, time) : 1;
+    for (const s of chosen) {
+      this.areaVector(normal, s, c);
+      evaluateRow(speed, samples.rows, s, v);
+      const area = Math.sqrt(normal[0]! * normal[0]! + normal[1]! * normal[1]! + normal[2]! * normal[2]!);
+      if (!(area > 0)) continue;
+      let into = 0;
+      for (let d = 0; d < 3; d++) into += ((swell * load.velocity[d]! - speed[d]!) * normal[d]!) / area;
+      if (into >= 0) continue;
+      const p = -0.5 * share * load.airDensity * load.dragCoefficient * into * into;
+      scatterRow(out, samples.rows, s, p * normal[0]!, p * normal[1]!, p * normal[2]!);
+    }
+  }
+
+  /** Forces a (axis × arm) M / Σ a |axis × arm|², arms from the area's middle: their moment about the axis is M. */
+  private twist(
+    out: Float64Array,
+    { axis, moment }: Extract<SceneLoad, { kind: 'twist' }>,
+    chosen: Int32Array,
+    c: Float64Array,
+    share: number,
+  ): void {
+    const { samples } = this.prepared;
+    const length = Math.sqrt(axis[0] * axis[0] + axis[1] * axis[1] + axis[2] * axis[2]);
+    const [ax, ay, az] = [axis[0] / length, axis[1] / length, axis[2] / length];
+    const place = this.scratch[0]!;
+    const middle = [0, 0, 0];
+    let area = 0;
+    for (const s of chosen) {
+      evaluateRow(place, samples.rows, s, c);
+      for (let d = 0; d < 3; d++) middle[d]! += samples.areas[s]! * place[d]!;
+      area += samples.areas[s]!;
+    }
+    for (let d = 0; d < 3; d++) middle[d]! /= area;
+    const around = (s: number): [number, number, number] => {
+      evaluateRow(place, samples.rows, s, c);
+      const [x, y, z] = [place[0]! - middle[0]!, place[1]! - middle[1]!, place[2]! - middle[2]!];
+      return [ay * z - az * y, az * x - ax * z, ax * y - ay * x];
+    };
+    let inertia = 0;
+    for (const s of chosen) {
+      const [x, y, z] = around(s);
+      inertia += samples.areas[s]! * (x * x + y * y + z * z);
+    }
+    if (!(inertia > 0)) return;
+    for (const s of chosen) {
+      const [x, y, z] = around(s);
+      const f = (share * moment * samples.areas[s]!) / inertia;
+      scatterRow(out, samples.rows, s, f * x, f * y, f * z);
     }
   }
 

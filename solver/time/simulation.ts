@@ -251,7 +251,7 @@ export class Simulation {
     potential.carrySupports({ time });
     potential.pressureShare = 1;
     potential.loads.dead(potential.dead, time, 1);
-    potential.loads.wind(potential.dead, this.coefficients, this.velocity, 1);
+    potential.loads.followers(potential.dead, this.coefficients, this.velocity, time, 1);
     potential.ground?.lag(this.coefficients, dt);
   }
 
@@ -269,7 +269,7 @@ export class Simulation {
       potential.carrySupports({ share });
       potential.pressureShare = share;
       potential.loads.dead(potential.dead, 0, share);
-      potential.loads.wind(potential.dead, c, this.velocity, share);
+      potential.loads.followers(potential.dead, c, this.velocity, null, share);
       potential.ground?.lag(c, 0);
       const before = c.slice();
       const problem: NewtonProblem = {
