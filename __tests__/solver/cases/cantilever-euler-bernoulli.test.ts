@@ -16,12 +16,6 @@ function solve(options: Omit<CantileverOptions, 'load'>): {
   return { tip, steps: report.newtonSteps, changes: report.changes, reaction: supports[0]!.force[2] };
 }
 
-it('nu = 0: closer to Timoshenko with more parts', () => {
-  const errors = [6, 10, 24].map((parts) => Math.abs(solve({ poissonsRatio: 0, parts }).tip / END_LOAD / 0.04024 - 1));
-  expect(errors[1]!).toBeLessThan(errors[0]!);
-  expect(errors[2]!).toBeLessThan(errors[1]!);
-});
-
 it('regression: six faces that leave a gap of 1 % bend within 5 % of the closed bar', () => {
   const closed = solve({ poissonsRatio: 0.3, parts: 10 }).tip;
   // The wall's faces are smaller by the gap and the edges are rounded by the inside rule: 4.2 % when this was written.
