@@ -120,13 +120,15 @@ export const loadSchema = z.discriminatedUnion('kind', [
   }),
 ]);
 
-export const obstacleSchema = z.strictObject({
-  id,
-  name,
-  kind: z.literal('ground'),
-  height: finite.default(0),
-  friction: notNegative('Friction').default(0.5),
-});
+const obstacleBase = { id, name, friction: notNegative('Friction').default(0.5) };
+
+export const obstacleSchema = z.discriminatedUnion('kind', [
+  z.strictObject({ ...obstacleBase, kind: z.literal('ground'), height: finite.default(0) }),
+  z.strictObject({ ...obstacleBase, kind: z.literal('sphere'), centre: vec3, radius: positive('The radius') }),
+  z
+    .strictObject({ ...obstacleBase, kind: z.literal('box'), min: vec3, max: vec3 })
+    .refine(({ min, max }) => min.every((x, d) => x < max[d]!), 'The box’s low corner must lie below its high one.'),
+]);
 
 export const gaugeSchema = z.strictObject({ id, name, point: vec3 });
 

@@ -103,15 +103,19 @@ export type SceneLoad =
       gusts?: { factor: number; seconds: number; seed: number } | undefined;
     };
 
-export type SceneObstacle = {
+interface ObstacleBase {
   id: string;
   name: string;
-  kind: 'ground';
-  /** Height along the scene's `up`, m. */
-  height: number;
   /** Coulomb coefficient. */
   friction: number;
-};
+}
+
+/** What the body can rest on or hit; it stands still. Lengths in m. */
+export type SceneObstacle =
+  /** Everything below a height along the scene's `up`. */
+  | (ObstacleBase & { kind: 'ground'; height: number })
+  | (ObstacleBase & { kind: 'sphere'; centre: Vec3; radius: number })
+  | (ObstacleBase & { kind: 'box'; min: Vec3; max: Vec3 });
 
 export interface SceneGauge {
   id: string;

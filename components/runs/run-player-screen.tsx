@@ -55,7 +55,7 @@ function Player({ open }: { open: OpenRun }) {
       pose={source}
       scheme={scheme}
       up={document?.up ?? 'z'}
-      groundHeight={document?.obstacles[0]?.height ?? null}
+      obstacles={document?.obstacles}
       unit={unit}
       marks={(document?.gauges ?? []).map((g) => ({ id: g.id, kind: 'gauge' as const, at: g.point }))}
     >

@@ -11,6 +11,7 @@ import { Row } from '../ui/row';
 import { Text } from '../ui/text';
 import { freeId, type Edit } from './edit';
 import { LoadEditor } from './load-editor';
+import { ObstacleEditor } from './obstacle-editor';
 import { regionWords } from './region-words';
 
 interface Props {
@@ -31,7 +32,9 @@ export function HoldsCard({ document, edit, ready, unit, picking, onPick }: Prop
   const bounds = ready?.report.bounds;
   const base = bounds ? bounds.min[up]! : 0;
   const height = bounds ? bounds.max[up]! - base : 1;
-  const ground = obstacles[0];
+  const ground = obstacles.find((obstacle) => obstacle.kind === 'ground');
+  const solids = obstacles.filter((obstacle) => obstacle.kind !== 'ground');
+  const reach = ready?.report.diagonal ?? 1;
   const addBase = () => {
     if (!bounds) return;
     const pad = 0.01 * ready.report.diagonal;
@@ -233,10 +236,11 @@ export function HoldsCard({ document, edit, ready, unit, picking, onPick }: Prop
               edit('ground', (d) => ({
                 ...d,
                 obstacles: ground
-                  ? []
+                  ? solids
                   : [
+                      ...solids,
                       {
-                        id: 'O1',
+                        id: freeId('O', d.obstacles),
                         name: 'Ground',
                         kind: 'ground',
                         height: Number((base - 0.3 * height).toPrecision(4)),
@@ -259,7 +263,10 @@ export function HoldsCard({ document, edit, ready, unit, picking, onPick }: Prop
             unit={unit}
             format={(v) => figures(v)}
             onChange={(v) =>
-              edit('ground-height', (d) => ({ ...d, obstacles: [{ ...ground, height: fromLength(v, unit) }] }))
+              edit('ground-height', (d) => ({
+                ...d,
+                obstacles: [...solids, { ...ground, height: fromLength(v, unit) }],
+              }))
             }
           />
           <DimensionSlider
@@ -270,13 +277,57 @@ export function HoldsCard({ document, edit, ready, unit, picking, onPick }: Prop
             step={0.05}
             format={(v) => v.toFixed(2)}
             onChange={(v) =>
-              edit('ground-friction', (d) => ({ ...d, obstacles: [{ ...ground, friction: Number(v.toFixed(3)) }] }))
+              edit('ground-friction', (d) => ({
+                ...d,
+                obstacles: [...solids, { ...ground, friction: Number(v.toFixed(3)) }],
+              }))
             }
           />
         </>
       ) : null}
+      {solids.map((obstacle) => (
+        <ObstacleEditor key={obstacle.id} obstacle={obstacle} edit={edit} unit={unit} reach={reach} />
+      ))}
+      <View style={{ flexDirection: 'row', flexWrap: 'wrap', gap: 8 }}>
+        <Button
+          label="Sphere"
+          hint="Add a sphere to hit"
+          disabledReason={bounds ? null : 'The body is being prepared.'}
+          onPress={() =>
+            edit('obstacle-add', (d) => ({ ...d, obstacles: [...d.obstacles, sphereUnder(d, bounds!, up)] }))
+          }
+        />
+        <Button
+          label="Box"
+          hint="Add a box to hit"
+          disabledReason={bounds ? null : 'The body is being prepared.'}
+          onPress={() => edit('obstacle-add', (d) => ({ ...d, obstacles: [...d.obstacles, boxUnder(d, bounds!, up)] }))}
+        />
+      </View>
     </Card>
   );
+}
+
+type Bounds = Ready['report']['bounds'];
+type Vec3 = [number, number, number];
+const tidy = (x: number) => Number(x.toPrecision(4));
+
+/** A ball of a third of the body's width, a little below its middle. */
+function sphereUnder(d: SceneDocument, { min, max }: Bounds, up: 1 | 2): SceneDocument['obstacles'][number] {
+  const side = up === 1 ? 2 : 1;
+  const radius = tidy(Math.min(max[0] - min[0], max[side]! - min[side]!) / 6);
+  const centre = min.map((x, k) => tidy(k === up ? x - 1.5 * radius : (x + max[k]!) / 2)) as Vec3;
+  return { id: freeId('O', d.obstacles), name: 'Sphere', kind: 'sphere', centre, radius, friction: 0.5 };
+}
+
+/** A step under one half of the body, a little below it. */
+function boxUnder(d: SceneDocument, { min, max }: Bounds, up: 1 | 2): SceneDocument['obstacles'][number] {
+  const height = 0.3 * (max[up]! - min[up]!);
+  const low = min.map((x, k) => tidy(k === up ? x - 1.2 * height : x)) as Vec3;
+  const high = max.map((x, k) =>
+    tidy(k === up ? min[up]! - 0.2 * height : k === 0 ? (min[0] + max[0]) / 2 : x),
+  ) as Vec3;
+  return { id: freeId('O', d.obstacles), name: 'Box', kind: 'box', min: low, max: high, friction: 0.5 };
 }
 
 type Support = SceneDocument['supports'][number];

@@ -178,7 +178,7 @@ export function Workbench({ scene, revision: opened, patches, draft, moveAtOnce 
       pose={live.pose}
       scheme={scheme}
       up={document.up}
-      groundHeight={document.obstacles[0]?.height ?? null}
+      obstacles={document.obstacles}
       tint={show === 'parts' ? 'parts' : 'clay'}
       seeThrough={show === 'see-through'}
       chosen={picked}

@@ -138,7 +138,7 @@ function Half({
         pose={source}
         scheme={scheme}
         up={document?.up ?? 'z'}
-        groundHeight={document?.obstacles[0]?.height ?? null}
+        obstacles={document?.obstacles}
         tint={side}
         camera={camera}
         unit={lengthUnitFor(run.provenance.diagonal)}

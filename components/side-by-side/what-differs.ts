@@ -40,9 +40,7 @@ function settingsOf(document: SceneDocument): Settings {
   out.set('Up', document.up);
   supportsOf(document, out);
   loadsOf(document, out);
-  const [ground] = document.obstacles;
-  out.set('Ground', ground ? `at ${mm(ground.height)} mm` : 'none');
-  if (ground) out.set('Friction of the ground', figures(ground.friction));
+  obstaclesOf(document, out);
   for (const gauge of document.gauges) out.set(`Gauge ${gauge.id}`, `at ${point(gauge.point)} mm`);
   timeOf(document, out);
   return out;
@@ -116,6 +114,18 @@ function loadsOf({ loads }: SceneDocument, out: Settings): void {
         break;
     }
     if ('region' in load) out.set(`${name}, where`, regionInFull(load.region));
+  }
+}
+
+function obstaclesOf({ obstacles }: SceneDocument, out: Settings): void {
+  const ground = obstacles.find((obstacle) => obstacle.kind === 'ground');
+  out.set('Ground', ground?.kind === 'ground' ? `at ${mm(ground.height)} mm` : 'none');
+  for (const obstacle of obstacles) {
+    const of = obstacle.kind === 'ground' ? 'the ground' : obstacle.id;
+    if (obstacle.kind === 'sphere')
+      out.set(`Sphere ${obstacle.id}`, `${mm(obstacle.radius)} mm about ${point(obstacle.centre)} mm`);
+    if (obstacle.kind === 'box') out.set(`Box ${obstacle.id}`, `${point(obstacle.min)} to ${point(obstacle.max)} mm`);
+    out.set(`Friction of ${of}`, figures(obstacle.friction));
   }
 }
 

@@ -2,6 +2,7 @@ import { useEffect, useRef, useState } from 'react';
 import type { Vec3 } from '../../solver/index';
 import { useTheme } from '../theme/use-theme';
 import { OrbitCamera } from './orbit';
+import type { SceneObstacle } from '../../solver/index';
 import { StageOverlay } from './stage-overlay';
 import { StageScene } from './stage-scene';
 import type { StageMark, StageViewProps } from './stage-types';
@@ -11,7 +12,20 @@ export { decodeChunk, displaySurface, energyKept, scalePatch, surfaceFromRecipe 
 
 const TAP_PIXELS = 6;
 const NONE: ReadonlySet<number> = new Set();
+const NO_OBSTACLES: readonly SceneObstacle[] = [];
 const NO_MARKS: readonly StageMark[] = [];
+
+/** The ground's height, when there is one, and the lowest place of the other obstacles, m along up. */
+function floorUnder(obstacles: readonly SceneObstacle[], up: 'y' | 'z'): { ground: number | null; foot: number } {
+  const u = up === 'y' ? 1 : 2;
+  let ground: number | null = null;
+  let foot = Infinity;
+  for (const obstacle of obstacles) {
+    if (obstacle.kind === 'ground') ground = obstacle.height;
+    else foot = Math.min(foot, obstacle.kind === 'sphere' ? obstacle.centre[u] - obstacle.radius : obstacle.min[u]);
+  }
+  return { ground, foot };
+}
 
 /** The live picture. Loaded on demand: it brings the 3-D library with it. */
 export default function StageCanvas(props: StageViewProps & { onLost: () => void }) {
@@ -20,12 +34,13 @@ export default function StageCanvas(props: StageViewProps & { onLost: () => void
     pose,
     scheme,
     up,
-    groundHeight = null,
+    obstacles = NO_OBSTACLES,
     tint = 'clay',
     chosen = NONE,
     seeThrough = false,
     label,
   } = props;
+  const floor = floorUnder(obstacles, up);
   const theme = useTheme();
   const host = useRef<HTMLDivElement>(null);
   const canvas = useRef<HTMLCanvasElement>(null);
@@ -99,11 +114,15 @@ export default function StageCanvas(props: StageViewProps & { onLost: () => void
     stage.current?.draw();
   }, [scheme]);
   useEffect(() => {
-    if (surface) stage.current?.scene.setSurface(surface, up, groundHeight);
+    if (surface) stage.current?.scene.setSurface(surface, up, floor.ground, floor.foot);
     stage.current?.scene.setSeeThrough(seeThrough);
     stage.current?.draw();
     // eslint-disable-next-line react-hooks/exhaustive-deps -- see-through has an effect of its own
-  }, [surface, up, groundHeight]);
+  }, [surface, up, floor.ground, floor.foot]);
+  useEffect(() => {
+    stage.current?.scene.setObstacles(obstacles);
+    stage.current?.draw();
+  }, [obstacles]);
   useEffect(() => {
     stage.current?.scene.setTint(tint, chosen);
     stage.current?.draw();

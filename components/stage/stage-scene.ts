@@ -17,9 +17,10 @@ import {
   Vector3,
   WebGLRenderer,
 } from 'three';
-import { evaluateRows, type SurfaceMap, type Vec3 } from '../../solver/index';
+import { evaluateRows, type SceneObstacle, type SurfaceMap, type Vec3 } from '../../solver/index';
 import { VERTICAL_FIELD_DEGREES, type OrbitCamera } from './orbit';
 import { SmoothNormals } from './smooth-normals';
+import { StageSolids } from './stage-solids';
 import { STAGE_COLOURS, type Scheme } from './stage-colours';
 
 export type Tint = 'clay' | 'parts' | 'left' | 'right';
@@ -42,6 +43,7 @@ export class StageScene {
   private readonly overhead = new DirectionalLight();
   private readonly sky = new HemisphereLight();
   private readonly ground = new Mesh(new PlaneGeometry(1, 1), new ShadowMaterial());
+  private readonly solids = new StageSolids();
   private body: Mesh<BufferGeometry, MeshLambertMaterial> | null = null;
   private surface: SurfaceMap | null = null;
   private normals: SmoothNormals | null = null;
@@ -80,7 +82,7 @@ export class StageScene {
     this.overhead.shadow.radius = 12;
     this.overhead.shadow.blurSamples = 12;
     this.ground.receiveShadow = true;
-    this.scene.add(this.sky, this.ground);
+    this.scene.add(this.sky, this.ground, this.solids.group);
   }
 
   setScheme(scheme: Scheme): void {
@@ -92,12 +94,13 @@ export class StageScene {
     this.sky.intensity = colours.skyStrength;
     this.key.intensity = colours.keyStrength;
     this.overhead.intensity = 0.35;
+    this.solids.setColour(colours.core);
     (this.ground.material as ShadowMaterial).opacity = colours.shadow;
     this.paint();
   }
 
   /** Takes a new surface; the camera frames the first one. */
-  setSurface(surface: SurfaceMap, up: 'y' | 'z', groundHeight: number | null): void {
+  setSurface(surface: SurfaceMap, up: 'y' | 'z', ground: number | null, foot: number): void {
     this.up = up;
     this.surface = surface;
     this.body?.geometry.dispose();
@@ -116,16 +119,19 @@ export class StageScene {
     this.body.frustumCulled = false;
     this.scene.add(this.body);
     this.normals.update(geometry.getAttribute('normal').array as Float32Array, surface.positions);
-    this.placeLights(min, max, groundHeight);
+    this.placeLights(min, max, ground ?? Math.min(foot, min[up === 'z' ? 2 : 1]));
     this.orbit.frame(min, max, this.width / this.height);
     this.paint();
   }
 
-  private placeLights(min: Vec3, max: Vec3, groundHeight: number | null): void {
+  setObstacles(obstacles: readonly SceneObstacle[]): void {
+    this.solids.set(obstacles);
+  }
+
+  private placeLights(min: Vec3, max: Vec3, floor: number): void {
     const { radius: r } = this;
     const u = this.up === 'z' ? 2 : 1;
     const centre = new Vector3(...(min.map((x, d) => (x + max[d]!) / 2) as Vec3));
-    const floor = groundHeight ?? min[u]!;
     this.camera.up.set(0, u === 1 ? 1 : 0, u === 2 ? 1 : 0);
     this.sky.position.copy(this.camera.up);
     const key = u === 2 ? new Vector3(-0.75, -0.55, 1.25) : new Vector3(-0.75, 1.25, 0.55);
@@ -289,6 +295,7 @@ export class StageScene {
 
   dispose(): void {
     this.body?.geometry.dispose();
+    this.solids.dispose();
     this.renderer.dispose();
   }
 }

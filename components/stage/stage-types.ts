@@ -1,5 +1,5 @@
 import type { ReactNode } from 'react';
-import type { SurfaceMap, Vec3 } from '../../solver/index';
+import type { SceneObstacle, SurfaceMap, Vec3 } from '../../solver/index';
 import type { OrbitCamera } from './orbit';
 import type { PoseSource } from './pose-source';
 import type { Scheme } from './stage-colours';
@@ -24,8 +24,8 @@ export interface StageViewProps {
   pose: PoseSource;
   scheme: Scheme;
   up: 'y' | 'z';
-  /** Height of the ground along up, m; null puts it under the body. */
-  groundHeight?: number | null;
+  /** What the body can hit; without a ground among them the shadow falls right under the body. */
+  obstacles?: readonly SceneObstacle[];
   tint?: Tint;
   /** Patches drawn in the action colour. */
   chosen?: ReadonlySet<number>;

@@ -44,24 +44,20 @@ export function constraintHessian(
   factor: number,
 ): void {
   const { rows, stiffness, axes } = constraint;
+  const tensor = new Float64Array(9);
   for (let k = 0; k < rows.count; k++) {
-    addRowProduct(
-      K,
-      pattern,
-      rows,
-      k,
-      axes.map((held) => (held ? factor * stiffness[k]! : 0)),
-    );
+    for (let i = 0; i < 3; i++) tensor[4 * i] = axes[i] ? factor * stiffness[k]! : 0;
+    addRowTensor(K, pattern, rows, k, tensor);
   }
 }
 
-/** K += diag(s) ⊗ N Nᵀ for one row, s a component. */
-export function addRowProduct(
+/** K += T ⊗ N Nᵀ for one row; T symmetric, 9 numbers row-major. */
+export function addRowTensor(
   K: Float64Array,
   pattern: BlockPattern,
   rows: BasisRows,
   row: number,
-  s: readonly number[],
+  T: ArrayLike<number>,
 ): void {
   const { basis, offsets, parts, values } = rows;
   const { position, blockAt, partCount, size } = pattern;
@@ -72,11 +68,14 @@ export function addRowProduct(
       if (p < q) continue;
       const at = blockAt[p * partCount + q]! * size * size;
       for (let i = 0; i < 3; i++) {
-        if (s[i] === 0) continue;
-        for (let a = 0; a < basis; a++) {
-          const value = s[i]! * values[e * basis + a]!;
-          const to = at + (i * basis + a) * size + i * basis;
-          for (let b = 0; b < basis; b++) K[to + b]! += value * values[f * basis + b]!;
+        for (let j = 0; j < 3; j++) {
+          const s = T[3 * i + j]!;
+          if (s === 0) continue;
+          for (let a = 0; a < basis; a++) {
+            const value = s * values[e * basis + a]!;
+            const to = at + (i * basis + a) * size + j * basis;
+            for (let b = 0; b < basis; b++) K[to + b]! += value * values[f * basis + b]!;
+          }
         }
       }
     }

@@ -4,9 +4,9 @@ import type { Prepared } from '../quadrature/prepared';
 import type { Scene } from '../scene';
 import { addDiagonal, addForm } from './body-forms';
 import { constraintGradient, constraintHessian, type Constraint } from './constraints';
-import { GroundContact } from './contact';
 import { ElasticEnergy } from './elastic';
 import { Loads } from './loads';
+import { ObstacleContact } from './obstacle-contact';
 import { subtractRows } from './rows';
 import { dampingTime } from '../material/law';
 import { carry, carryShare, penaltyStiffness, placeSupports, type PlacedSupport } from './supports';
@@ -32,7 +32,7 @@ export class PotentialEnergy {
   readonly elastic: ElasticEnergy;
   supports: PlacedSupport[] = [];
   loads: Loads;
-  ground: GroundContact | null = null;
+  contacts: ObstacleContact[] = [];
   /** The pull of a hand, when there is one. */
   pull: Constraint | null = null;
   /** Forces that do not change within the step, N; the gradient subtracts them. */
@@ -119,20 +119,13 @@ export class PotentialEnergy {
         this.ties.stiffness[k] = ties.areas[k]! * TIE_FACTOR * penaltyStiffness(Math.min(young[a]!, young[b]!), volume);
       }
     }
-    const obstacle = scene.obstacles[0];
     const delta = CONTACT_DEPTH * report.diagonal;
-    this.ground = obstacle
-      ? new GroundContact(
-          samples,
-          obstacle,
-          scene.up === 'y' ? 1 : 2,
-          Float64Array.from({ length: samples.count }, (_, s) => {
-            const body = bodies[samples.body[s]!]!;
-            return (CONTACT_FACTOR * young[samples.body[s]!]!) / cubeRoot(body.volume);
-          }),
-          delta,
-        )
-      : null;
+    const kappa = Float64Array.from({ length: samples.count }, (_, s) => {
+      const body = bodies[samples.body[s]!]!;
+      return (CONTACT_FACTOR * young[samples.body[s]!]!) / cubeRoot(body.volume);
+    });
+    const up = scene.up === 'y' ? 1 : 2;
+    this.contacts = scene.obstacles.map((obstacle) => new ObstacleContact(samples, obstacle, up, kappa, delta));
   }
 
   /** Moves carried supports to `time`, or for statics to a share of their way. */
@@ -192,7 +185,7 @@ export class PotentialEnergy {
       r[u]! += this.curvatureStiffness[u]! * c[u]!;
     }
     for (const constraint of this.constraints()) energy += constraintGradient(constraint, c, r);
-    if (this.ground) energy += this.ground.gradient(c, r);
+    for (const contact of this.contacts) energy += contact.gradient(c, r);
     for (let u = 0; u < r.length; u++) {
       energy -= this.dead[u]! * c[u]!;
       r[u]! -= this.dead[u]!;
@@ -231,7 +224,7 @@ export class PotentialEnergy {
   addVarying(K: Float64Array, c: Float64Array, factor: number, definite: boolean, single: boolean): void {
     this.elastic.hessian(K, factor, definite, single);
     if (this.pull) constraintHessian(K, this.pattern, this.pull, factor);
-    this.ground?.hessian(K, this.pattern, c, factor);
+    for (const contact of this.contacts) contact.hessian(K, this.pattern, c, factor);
   }
 
   /** K += factor · Σ ρ M. */

@@ -252,7 +252,7 @@ export class Simulation {
     potential.pressureShare = 1;
     potential.loads.dead(potential.dead, time, 1);
     potential.loads.followers(potential.dead, this.coefficients, this.velocity, time, 1);
-    potential.ground?.lag(this.coefficients, dt);
+    for (const contact of potential.contacts) contact.lag(this.coefficients, dt);
   }
 
   /**
@@ -270,7 +270,7 @@ export class Simulation {
       potential.pressureShare = share;
       potential.loads.dead(potential.dead, 0, share);
       potential.loads.followers(potential.dead, c, this.velocity, null, share);
-      potential.ground?.lag(c, 0);
+      for (const contact of potential.contacts) contact.lag(c, 0);
       const before = c.slice();
       const problem: NewtonProblem = {
         evaluate: (pose, gradient) => potential.gradient(pose, gradient),

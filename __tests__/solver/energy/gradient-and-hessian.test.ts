@@ -137,7 +137,7 @@ describe('rubbing on a ground', () => {
   function rubbing(slide: number) {
     const opened = open(cube(rough));
     const { potential, prepared, c, n } = opened;
-    potential.ground!.lag(c, 1 / 24);
+    potential.contacts[0]!.lag(c, 1 / 24);
     const aside = affineCoefficients(prepared, [0, 0, 0, 0, 0, 0, 0, 0, 0], [slide, slide / 3, 0]);
     const moved = c.map((x, u) => x + aside[u]!);
     return { ...opened, moved, r: new Float64Array(n), scratch: new Float64Array(n) };
@@ -148,7 +148,7 @@ describe('rubbing on a ground', () => {
     ['sliding', 5e-2],
   ])('%s: the gradient is the slope of energy and dissipation', (_, slide) => {
     const { potential, moved, d, r, scratch } = rubbing(slide);
-    const ground = potential.ground!;
+    const ground = potential.contacts[0]!;
     ground.gradient(moved, r);
     const h = 1e-7;
     const slope =
@@ -161,7 +161,7 @@ describe('rubbing on a ground', () => {
     ['sliding', 5e-2],
   ])('%s: the Hessian is never below the true one, and exact across the way', (_, slide) => {
     const { potential, prepared, pattern, bound, moved, n } = rubbing(slide);
-    const ground = potential.ground!;
+    const ground = potential.contacts[0]!;
     const K = bound.allocate(pattern.blockCount * pattern.size ** 2);
     ground.hessian(K, pattern, moved, 1);
     const zero = [0, 0, 0, 0, 0, 0, 0, 0, 0];
