@@ -41,6 +41,11 @@ export class Loads {
     return this.placed.some(({ load }) => load.kind === 'pressure');
   }
 
+  /** Whether some load depends on the pose and is taken at a given one: wind and twists. */
+  get lags(): boolean {
+    return this.placed.some(({ load }) => load.kind === 'wind' || load.kind === 'twist');
+  }
+
   /** out = loads that do not depend on the pose (gravity, traction, pushes) at `time`, scaled by `share`. */
   dead(out: Float64Array, time: number, share: number): void {
     for (let u = 0; u < out.length; u++) out[u] = share * this.gravity[u]!;

@@ -18,6 +18,9 @@ import { cubeRoot } from '../math/elementary';
 const LIVE_TOLERANCE = 5e-5;
 const BAKE_TOLERANCE = 1e-7;
 const STATIC_TOLERANCE = 1e-11;
+/** At rest, loads that follow the pose are renewed until no coefficient moves by more than this of the diagonal. */
+const FOLLOWED = 1e-7;
+const ROUNDS = 60;
 
 export interface StepReport {
   newtonSteps: number;
@@ -268,32 +271,44 @@ export class Simulation {
       const share = load / loadSteps;
       potential.carrySupports({ share });
       potential.pressureShare = share;
-      potential.loads.dead(potential.dead, 0, share);
-      potential.loads.followers(potential.dead, c, this.velocity, null, share);
       for (const contact of potential.contacts) contact.lag(c, 0);
       const before = c.slice();
-      const problem: NewtonProblem = {
-        evaluate: (pose, gradient) => potential.gradient(pose, gradient),
-        worstJ: () => potential.elastic.worstJ(),
-        refresh: (definite, predicted) => this.matrix.refresh(c, { stiffness: 1, mass: 0 }, definite, predicted),
-        solve: (x, closely) => this.matrix.solve(x, closely),
-        stepped: (delta, s) => potential.elastic.predictPressure(delta, s),
-      };
-      const report = minimise(problem, c, r, {
-        tolerance: STATIC_TOLERANCE,
-        size: this.prepared.report.diagonal,
-        maxSteps: 60,
-        factor: 'every',
-        keepFactor: false,
-        trustFullSteps: true,
-      });
-      newtonSteps += report.steps;
-      changes = report.changes;
-      if (!report.converged) {
+      const stop = (why: string) => {
         c.set(before);
         throw new SolverStopped(
-          `The solver found no rest at load step ${load} of ${loadSteps}. The last good pose is kept. Try more load steps, a stiffer material, or check that something holds the body.`,
+          `The solver found no rest at load step ${load} of ${loadSteps}. ${why} The last good pose is kept. Try more load steps, a stiffer material, or check that something holds the body.`,
         );
+      };
+      // Wind and twists depend on the pose and stand still within a solution: solved again
+      // until they agree with it, half the way each time, as the whole way overshoots.
+      for (let round = 1; ; round++) {
+        const earlier = round === 1 ? null : potential.dead.slice();
+        potential.loads.dead(potential.dead, 0, share);
+        potential.loads.followers(potential.dead, c, this.velocity, null, share);
+        if (earlier) for (let u = 0; u < c.length; u++) potential.dead[u] = 0.5 * (potential.dead[u]! + earlier[u]!);
+        const start = c.slice();
+        const problem: NewtonProblem = {
+          evaluate: (pose, gradient) => potential.gradient(pose, gradient),
+          worstJ: () => potential.elastic.worstJ(),
+          refresh: (definite, predicted) => this.matrix.refresh(c, { stiffness: 1, mass: 0 }, definite, predicted),
+          solve: (x, closely) => this.matrix.solve(x, closely),
+          stepped: (delta, s) => potential.elastic.predictPressure(delta, s),
+        };
+        const report = minimise(problem, c, r, {
+          tolerance: STATIC_TOLERANCE,
+          size: this.prepared.report.diagonal,
+          maxSteps: 60,
+          factor: 'every',
+          keepFactor: false,
+          trustFullSteps: true,
+        });
+        newtonSteps += report.steps;
+        if (round === 1) changes = report.changes;
+        if (!report.converged) stop('A step did not settle.');
+        if (!potential.loads.lags) break;
+        const moved = c.reduce((most, x, u) => Math.max(most, Math.abs(x - start[u]!)), 0);
+        if (moved < FOLLOWED * this.prepared.report.diagonal) break;
+        if (round === ROUNDS) stop('The wind or the twist turns with the body and they do not come to terms.');
       }
       onProgress?.(share);
     }
