@@ -46,7 +46,7 @@ describe.each<Device>(['wide', 'phone'])('on a %s window', (device) => {
     await (await again).setFiles({ name: 'strap.csv', mimeType: 'text/csv', buffer: Buffer.from(SHEET) });
 
     // μ = 0.372427 MPa up to stretch 1.5 (least squares over the same data, recomputed independently): E = 3 μ.
-    await page.getByText('1.12 MPa').waitFor();
+    await page.getByRole('dialog').getByText('1.12 MPa').waitFor();
     await page.getByText('Holds up to').scrollIntoViewIfNeeded();
     await shot(page, `${device}-fit`);
     await page.getByRole('button', { name: 'Go on with this stiffness' }).click();
