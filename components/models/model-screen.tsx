@@ -46,19 +46,25 @@ function ModelPage({ model, patches, fault }: { model: Model; patches: Patch[] |
   const client = useQueryClient();
   const [pose] = useState(() => new PoseSource());
   const [chosen, setChosen] = useState<ReadonlySet<number>>(new Set());
-  const drawn = useQuery({
-    queryKey: ['model-surface', model.id, model.unit],
+  const scaled = useQuery({
+    queryKey: ['model-metric', model.id, model.unit],
     staleTime: Infinity,
     gcTime: 60_000,
     enabled: patches !== null,
     queryFn: async () => {
-      const { displaySurface, scalePatch } = await stageModule();
-      const metric = patches!.map((patch) => scalePatch(patch, model.unit));
-      return { metric, surface: displaySurface(metric) };
+      const { scalePatch } = await stageModule();
+      return patches!.map((patch) => scalePatch(patch, model.unit));
     },
   });
-  const surface = drawn.data?.surface ?? null;
-  const metric = drawn.data?.metric;
+  const metric = scaled.data;
+  const drawn = useQuery({
+    queryKey: ['model-surface', model.id, model.unit],
+    staleTime: Infinity,
+    gcTime: 60_000,
+    enabled: metric !== undefined,
+    queryFn: async () => (await stageModule()).displaySurface(metric!),
+  });
+  const surface = drawn.data ?? null;
   const presets = useQuery(queries.materials(production!.id));
   const sceneName = `${model.name}, first look`.slice(0, 120);
   const items = presets.data?.items;
@@ -69,8 +75,12 @@ function ModelPage({ model, patches, fault }: { model: Model; patches: Patch[] |
   // Once its size is settled the body is set up while its report is read, so that the first look moves at once.
   useEffect(
     () =>
-      maySetUp && model.unitConfirmed && metric && firstScene
-        ? prepareAhead({ body: bodyName(firstScene), scene: firstScene, patches: metric })
+      maySetUp
+        ? prepareAhead(
+            model.unitConfirmed && metric && firstScene
+              ? { body: bodyName(firstScene), scene: firstScene, patches: metric }
+              : null,
+          )
         : undefined,
     [maySetUp, model.unitConfirmed, metric, firstScene],
   );
@@ -111,7 +121,10 @@ function ModelPage({ model, patches, fault }: { model: Model; patches: Patch[] |
     >
       <View style={styles.corner} pointerEvents="none">
         <Text variant="note">
-          {fault ?? drawn.error?.message ?? (surface ? 'As it arrived.' : 'Fetching the patches …')}
+          {fault ??
+            scaled.error?.message ??
+            drawn.error?.message ??
+            (surface ? 'As it arrived.' : 'Fetching the patches …')}
         </Text>
         {chosen.size > 0 && patches ? (
           <Text variant="note" color="ink2">

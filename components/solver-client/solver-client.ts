@@ -37,22 +37,26 @@ export function bodyName({ geometry, unit }: Scene): string {
 /** A body set up ahead waits this long for its scene after the screen that asked for it was left. */
 const PATIENCE_MILLISECONDS = 20_000;
 
-let ahead: { body: string; worker: Worker } | null = null;
+/** `body` null: the worker has started and waits for one. */
+let ahead: { body: string | null; worker: Worker } | null = null;
 let leaving: ReturnType<typeof setTimeout> | undefined;
 
 /**
- * Starts a worker on a body while a person still reads about it; the next SolverClient that opens the same body
- * takes the worker over. Returns what to call when the screen is left.
+ * Starts a worker, and sets a body up in it while a person still reads about it (null: it is not known yet). The next
+ * SolverClient that opens the same body takes the worker over. Returns what to call when the screen is left.
  */
-export function prepareAhead(open: OpenScene): () => void {
+export function prepareAhead(open: OpenScene | null): () => void {
   clearTimeout(leaving);
-  if (ahead?.body !== open.body) {
-    dropAhead();
+  if (ahead && ahead.body !== null && ahead.body !== open?.body) dropAhead();
+  if (!ahead) {
     const worker = newWorker();
     // A fault shows when the scene is opened.
     worker.onerror = (event) => event.preventDefault();
-    worker.postMessage({ type: 'prepare-ahead', ...open } satisfies Request);
-    ahead = { body: open.body, worker };
+    ahead = { body: null, worker };
+  }
+  if (open && ahead.body === null) {
+    ahead.worker.postMessage({ type: 'prepare-ahead', ...open } satisfies Request);
+    ahead.body = open.body;
   }
   return () => {
     leaving = setTimeout(dropAhead, PATIENCE_MILLISECONDS);
