@@ -64,14 +64,6 @@ export function likeWhat(metres: number): string {
   return things.find(([limit]) => metres <= limit)?.[1] ?? 'as a village';
 }
 
-/** HH:MM:SS:FF of a frame at a whole number of frames per second. */
-export function timeCode(frame: number, framesPerSecond: number): string {
-  const rate = Math.round(framesPerSecond);
-  const seconds = Math.floor(frame / rate);
-  const two = (n: number) => String(n).padStart(2, '0');
-  return `${two(Math.floor(seconds / 3600))}:${two(Math.floor(seconds / 60) % 60)}:${two(seconds % 60)}:${two(frame % rate)}`;
-}
-
 /** HH:MM of a moment, where the reader is. */
 export const clockText = (moment: Date): string =>
   moment.toLocaleTimeString('en-GB', { hour: '2-digit', minute: '2-digit' });

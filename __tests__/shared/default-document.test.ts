@@ -1,7 +1,8 @@
 import { defaultDocument } from '../../shared/default-document';
 import { sceneDocumentSchema } from '../../shared/scene-document';
 import type { Model } from '../../shared/wire/models';
-import { figures, lengthText, stressText, timeCode } from '../../shared/units';
+import { timeCode } from '../../shared/time-code';
+import { figures, lengthText, stressText } from '../../shared/units';
 
 const model = {
   id: '7b0e6b9e-5b0e-4c7e-9a39-0d5c1f5d1a11',

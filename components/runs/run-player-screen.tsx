@@ -1,7 +1,8 @@
 import { router } from 'expo-router';
 import { useEffect } from 'react';
 import { ScrollView, StyleSheet, View } from 'react-native';
-import { dateText, lengthUnitFor, timeCode } from '../../shared/units';
+import { timeCode } from '../../shared/time-code';
+import { dateText, lengthUnitFor } from '../../shared/units';
 import { StageView } from '../stage/stage-view';
 import { useBreakpoint } from '../theme/use-breakpoint';
 import { useTheme } from '../theme/use-theme';
